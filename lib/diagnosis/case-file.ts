@@ -47,6 +47,10 @@ const oneOf = <const T extends readonly [string, ...string[]]>(what: string, val
 const listOf = <T extends z.ZodType>(what: string, item: T) =>
   maybe(z.array(item, { error: `${what} must be a list` }));
 
+/** A list of the case: absent and empty are the same. */
+const items = <T extends z.ZodType>(what: string, item: T) =>
+  z.preprocess((v) => v ?? [], z.array(item, { error: `${what} must be a list` }));
+
 const yesNo = (what: string) => maybe(z.boolean({ error: `${what} must be true or false` }));
 
 /** Readings of any sample: wrong types refused by path; unknown keys kept; null treated as absent. */

@@ -39,11 +39,14 @@ export interface ProofResult {
   monitors: { monitor: string; state: ReadinessState; message: string }[];
 }
 
+/** A recorded test; without a phase it is as found. */
+export type ProofTest = Pick<TestRecord, "id" | "outcome"> & Partial<TestRecord> & { phase?: Phase };
+
 export interface ProofInput {
   caseFile: CaseFile;
   provenCauses: readonly CauseId[];
   /** Recorded tests; those of phase `after` repeat what showed the fault. Without a phase: as found. */
-  tests?: readonly (Pick<TestRecord, "id" | "outcome"> & Partial<TestRecord> & { phase?: Phase })[];
+  tests?: readonly ProofTest[];
   /** Codes read after the repair; absent or undefined: not read. */
   afterCodes?: readonly { code: string; status: CodeStatus }[];
   readiness?: Record<string, ReadinessState> | null;
@@ -178,7 +181,7 @@ function parameterRows(
 }
 
 function testRows(input: ProofInput): ProofTestRow[] {
-  const all = input.tests ?? input.caseFile.tests;
+  const all: readonly ProofTest[] = input.tests ?? input.caseFile.tests;
   const rows: ProofTestRow[] = [];
   for (const cause of input.provenCauses) {
     for (const [id, bad] of Object.entries(PROVING[cause] ?? {}) as [TestRecord["id"], readonly string[]][]) {
@@ -247,7 +250,7 @@ export function judgeProof(input: ProofInput): ProofResult {
   }
   const tests = testRows(input);
 
-  const missing = [
+  const missing: ProofResult["missing"] = [
     ...[...new Set(rows.filter((r) => r.verdict === "incomplete").map((r) => r.mode))].map((mode) => ({
       what: mode,
       message: `Take the readings again, ${MODE_LABELS[mode].toLowerCase()}: that is where the fault showed.`,

@@ -59,7 +59,12 @@ export async function inShop<T>(ctx: Ctx, work: (tx: Tx) => Promise<T>, options:
 }
 
 /** Puts a job in the queue, in the transaction that needs it done: a rollback takes it away again. */
-export async function enqueue(tx: Tx, task: string, payload: Record<string, unknown>, options: { key?: string; due?: Date } = {}): Promise<void> {
+export async function enqueue(
+  tx: Tx,
+  task: string,
+  payload: Record<string, unknown>,
+  options: { key?: string; due?: Date } = {},
+): Promise<void> {
   await tx.execute(
     sql`select enqueue(${task}, ${JSON.stringify(payload)}::json, ${options.key ?? null}, ${options.due?.toISOString() ?? null}::timestamptz)`,
   );

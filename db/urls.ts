@@ -15,7 +15,8 @@ export interface DatabaseUrls {
  */
 export function databaseUrls(env: Record<string, string | undefined> = process.env): DatabaseUrls {
   const owner = env.DATABASE_URL;
-  if (!owner) throw new Error("DATABASE_URL is not set: give the PostgreSQL address, or run `npm start`, which brings its own.");
+  if (!owner)
+    throw new Error("DATABASE_URL is not set: give the PostgreSQL address, or run `npm start`, which brings its own.");
   const secret = env.BETTER_AUTH_SECRET ?? "";
   const as = (role: string) => {
     const url = new URL(owner);

@@ -471,6 +471,7 @@ CREATE TABLE "quote_drafts" (
 	"finding" text NOT NULL,
 	"ready_at" timestamp with time zone,
 	"warranty" text NOT NULL,
+	"diagnosis_net_minor" bigint,
 	"version" integer DEFAULT 1 NOT NULL,
 	CONSTRAINT "quote_drafts_shop_id_case_id_pk" PRIMARY KEY("shop_id","case_id")
 );

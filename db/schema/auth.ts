@@ -1,4 +1,4 @@
-import { boolean, integer, pgSchema, text, timestamp, uniqueIndex, index, bigint } from "drizzle-orm/pg-core";
+import { bigint, boolean, index, integer, pgSchema, text, timestamp, uniqueIndex } from "drizzle-orm/pg-core";
 
 /**
  * The tables of better-auth. They stand in a schema of their own, outside the shops' row policies, and only the

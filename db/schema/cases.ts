@@ -1,4 +1,15 @@
-import { boolean, foreignKey, index, integer, jsonb, pgTable, primaryKey, real, text, uniqueIndex } from "drizzle-orm/pg-core";
+import {
+  boolean,
+  foreignKey,
+  index,
+  integer,
+  jsonb,
+  pgTable,
+  primaryKey,
+  real,
+  text,
+  uniqueIndex,
+} from "drizzle-orm/pg-core";
 import { id, instant, minor, shopId, version } from "./columns";
 import { customers, people, vehicles } from "./shops";
 
@@ -54,10 +65,26 @@ export const cases = pgTable(
   (t) => [
     primaryKey({ columns: [t.shopId, t.id] }),
     uniqueIndex("cases_number").on(t.shopId, t.number),
-    foreignKey({ name: "cases_customer", columns: [t.shopId, t.customerId], foreignColumns: [customers.shopId, customers.id] }).onDelete("restrict"),
-    foreignKey({ name: "cases_vehicle", columns: [t.shopId, t.vehicleId], foreignColumns: [vehicles.shopId, vehicles.id] }).onDelete("restrict"),
-    foreignKey({ name: "cases_technician", columns: [t.shopId, t.technicianId], foreignColumns: [people.shopId, people.id] }).onDelete("restrict"),
-    foreignKey({ name: "cases_comeback", columns: [t.shopId, t.comebackOfId], foreignColumns: [t.shopId, t.id] }).onDelete("restrict"),
+    foreignKey({
+      name: "cases_customer",
+      columns: [t.shopId, t.customerId],
+      foreignColumns: [customers.shopId, customers.id],
+    }).onDelete("restrict"),
+    foreignKey({
+      name: "cases_vehicle",
+      columns: [t.shopId, t.vehicleId],
+      foreignColumns: [vehicles.shopId, vehicles.id],
+    }).onDelete("restrict"),
+    foreignKey({
+      name: "cases_technician",
+      columns: [t.shopId, t.technicianId],
+      foreignColumns: [people.shopId, people.id],
+    }).onDelete("restrict"),
+    foreignKey({
+      name: "cases_comeback",
+      columns: [t.shopId, t.comebackOfId],
+      foreignColumns: [t.shopId, t.id],
+    }).onDelete("restrict"),
     // the cases list: open work of a shop by whom it waits on
     index("cases_open").on(t.shopId, t.waitingOn, t.number),
     // the cases list by stage (parked, closed this week)
@@ -90,7 +117,11 @@ export const stageEvents = pgTable(
     byName: text("by_name").notNull(),
     at: instant("at").notNull(),
   },
-  (t) => [primaryKey({ columns: [t.shopId, t.id] }), caseKey("stage_events_case", t), index("stage_events_of_case").on(t.shopId, t.caseId, t.at)],
+  (t) => [
+    primaryKey({ columns: [t.shopId, t.id] }),
+    caseKey("stage_events_case", t),
+    index("stage_events_of_case").on(t.shopId, t.caseId, t.at),
+  ],
 );
 
 /** A yes to diagnosis, or to a higher ceiling: who gave it, how, in which words, up to how much. */
@@ -108,7 +139,11 @@ export const authorizations = pgTable(
     takenByName: text("taken_by_name").notNull(),
     at: instant("at").notNull(),
   },
-  (t) => [primaryKey({ columns: [t.shopId, t.id] }), caseKey("authorizations_case", t), index("authorizations_of_case").on(t.shopId, t.caseId, t.at)],
+  (t) => [
+    primaryKey({ columns: [t.shopId, t.id] }),
+    caseKey("authorizations_case", t),
+    index("authorizations_of_case").on(t.shopId, t.caseId, t.at),
+  ],
 );
 
 /** One column of the readings sheet. `values` is what was typed, in internal units, impossible ones too. */
@@ -127,7 +162,11 @@ export const samples = pgTable(
     beforeConsent: boolean("before_consent").notNull().default(false),
     version: version(),
   },
-  (t) => [primaryKey({ columns: [t.shopId, t.id] }), caseKey("samples_case", t), index("samples_of_case").on(t.shopId, t.caseId, t.position)],
+  (t) => [
+    primaryKey({ columns: [t.shopId, t.id] }),
+    caseKey("samples_case", t),
+    index("samples_of_case").on(t.shopId, t.caseId, t.position),
+  ],
 );
 
 export const caseCodes = pgTable(
@@ -163,7 +202,11 @@ export const testOutcomes = pgTable(
     at: instant("at").notNull(),
     undoneAt: instant("undone_at"),
   },
-  (t) => [primaryKey({ columns: [t.shopId, t.id] }), caseKey("test_outcomes_case", t), index("test_outcomes_of_case").on(t.shopId, t.caseId, t.at)],
+  (t) => [
+    primaryKey({ columns: [t.shopId, t.id] }),
+    caseKey("test_outcomes_case", t),
+    index("test_outcomes_of_case").on(t.shopId, t.caseId, t.at),
+  ],
 );
 
 /** A technician's word on a cause: suspected with a reason, or proven by a test or a reading. */
@@ -184,7 +227,11 @@ export const causeMarks = pgTable(
     at: instant("at").notNull(),
     withdrawnAt: instant("withdrawn_at"),
   },
-  (t) => [primaryKey({ columns: [t.shopId, t.id] }), caseKey("cause_marks_case", t), index("cause_marks_of_case").on(t.shopId, t.caseId, t.at)],
+  (t) => [
+    primaryKey({ columns: [t.shopId, t.id] }),
+    caseKey("cause_marks_case", t),
+    index("cause_marks_of_case").on(t.shopId, t.caseId, t.at),
+  ],
 );
 
 export const caseNotes = pgTable(
@@ -198,7 +245,11 @@ export const caseNotes = pgTable(
     byName: text("by_name").notNull(),
     at: instant("at").notNull(),
   },
-  (t) => [primaryKey({ columns: [t.shopId, t.id] }), caseKey("case_notes_case", t), index("case_notes_of_case").on(t.shopId, t.caseId, t.at)],
+  (t) => [
+    primaryKey({ columns: [t.shopId, t.id] }),
+    caseKey("case_notes_case", t),
+    index("case_notes_of_case").on(t.shopId, t.caseId, t.at),
+  ],
 );
 
 /** A stored file of a case. The original stays untouched; `display` and `thumb` are what a worker made of it. */
@@ -225,6 +276,9 @@ export const files = pgTable(
     byName: text("by_name").notNull(),
     at: instant("at").notNull(),
   },
-  (t) => [primaryKey({ columns: [t.shopId, t.id] }), caseKey("files_case", t), index("files_of_case").on(t.shopId, t.caseId, t.at)],
+  (t) => [
+    primaryKey({ columns: [t.shopId, t.id] }),
+    caseKey("files_case", t),
+    index("files_of_case").on(t.shopId, t.caseId, t.at),
+  ],
 );
-

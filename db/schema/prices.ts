@@ -27,7 +27,11 @@ export const operations = pgTable(
     isActive: boolean("is_active").notNull().default(true),
     version: version(),
   },
-  (t) => [primaryKey({ columns: [t.shopId, t.id] }), uniqueIndex("operations_name").on(t.shopId, t.name), index("operations_rate").on(t.shopId, t.rateId)],
+  (t) => [
+    primaryKey({ columns: [t.shopId, t.id] }),
+    uniqueIndex("operations_name").on(t.shopId, t.name),
+    index("operations_rate").on(t.shopId, t.rateId),
+  ],
 );
 
 export const parts = pgTable(
@@ -43,7 +47,11 @@ export const parts = pgTable(
     isActive: boolean("is_active").notNull().default(true),
     version: version(),
   },
-  (t) => [primaryKey({ columns: [t.shopId, t.id] }), uniqueIndex("parts_number").on(t.shopId, t.number), index("parts_name").on(t.shopId, t.name)],
+  (t) => [
+    primaryKey({ columns: [t.shopId, t.id] }),
+    uniqueIndex("parts_number").on(t.shopId, t.number),
+    index("parts_name").on(t.shopId, t.name),
+  ],
 );
 
 /** A job that is quoted the same way every time, offered when its cause is marked. */
@@ -61,5 +69,9 @@ export const setJobs = pgTable(
     isActive: boolean("is_active").notNull().default(true),
     version: version(),
   },
-  (t) => [primaryKey({ columns: [t.shopId, t.id] }), uniqueIndex("set_jobs_name").on(t.shopId, t.name), index("set_jobs_cause").on(t.shopId, t.causeId)],
+  (t) => [
+    primaryKey({ columns: [t.shopId, t.id] }),
+    uniqueIndex("set_jobs_name").on(t.shopId, t.name),
+    index("set_jobs_cause").on(t.shopId, t.causeId),
+  ],
 );

@@ -1,4 +1,14 @@
-import { boolean, foreignKey, index, integer, jsonb, pgTable, primaryKey, text, uniqueIndex } from "drizzle-orm/pg-core";
+import {
+  boolean,
+  foreignKey,
+  index,
+  integer,
+  jsonb,
+  pgTable,
+  primaryKey,
+  text,
+  uniqueIndex,
+} from "drizzle-orm/pg-core";
 import type { QuoteLineDraft, RevisionSnapshot } from "@/lib/cases/quote-schema";
 import { cases } from "./cases";
 import { bytea, id, instant, minor, shopId, version } from "./columns";
@@ -18,6 +28,8 @@ export const quoteDrafts = pgTable(
     finding: text("finding").notNull(),
     readyAt: instant("ready_at"),
     warranty: text("warranty").notNull(),
+    /** What the diagnosis costs, when the writer asks less than the clock says; never above the agreed ceiling. */
+    diagnosisNetMinor: minor("diagnosis_net_minor"),
     version: version(),
   },
   (t) => [primaryKey({ columns: [t.shopId, t.caseId] }), caseKey("quote_drafts_case", t)],
@@ -38,7 +50,11 @@ export const quoteJobs = pgTable(
     lines: jsonb("lines").$type<QuoteLineDraft[]>().notNull(),
     version: version(),
   },
-  (t) => [primaryKey({ columns: [t.shopId, t.id] }), caseKey("quote_jobs_case", t), index("quote_jobs_of_case").on(t.shopId, t.caseId, t.position)],
+  (t) => [
+    primaryKey({ columns: [t.shopId, t.id] }),
+    caseKey("quote_jobs_case", t),
+    index("quote_jobs_of_case").on(t.shopId, t.caseId, t.position),
+  ],
 );
 
 /** A sent quote, word for word and cent for cent. Only its standing (withdrawn, superseded, first opened) may change. */
@@ -127,7 +143,11 @@ export const questions = pgTable(
     byName: text("by_name").notNull(),
     at: instant("at").notNull(),
   },
-  (t) => [primaryKey({ columns: [t.shopId, t.id] }), caseKey("questions_case", t), index("questions_of_case").on(t.shopId, t.caseId, t.at)],
+  (t) => [
+    primaryKey({ columns: [t.shopId, t.id] }),
+    caseKey("questions_case", t),
+    index("questions_of_case").on(t.shopId, t.caseId, t.at),
+  ],
 );
 
 /** A job the customer said yes to, with the price it may not exceed. */
@@ -196,7 +216,11 @@ export const partsUsed = pgTable(
     at: instant("at").notNull(),
     version: version(),
   },
-  (t) => [primaryKey({ columns: [t.shopId, t.id] }), caseKey("parts_used_case", t), index("parts_used_of_job").on(t.shopId, t.caseId, t.workJobId)],
+  (t) => [
+    primaryKey({ columns: [t.shopId, t.id] }),
+    caseKey("parts_used_case", t),
+    index("parts_used_of_job").on(t.shopId, t.caseId, t.workJobId),
+  ],
 );
 
 /** An issued paper: its data, its bytes, its sum. Never changed; a mistake is answered by another paper. */
@@ -235,7 +259,11 @@ export const payments = pgTable(
     takenByName: text("taken_by_name").notNull(),
     at: instant("at").notNull(),
   },
-  (t) => [primaryKey({ columns: [t.shopId, t.id] }), caseKey("payments_case", t), index("payments_of_paper").on(t.shopId, t.paperId, t.at)],
+  (t) => [
+    primaryKey({ columns: [t.shopId, t.id] }),
+    caseKey("payments_case", t),
+    index("payments_of_paper").on(t.shopId, t.paperId, t.at),
+  ],
 );
 
 /** Mail to go out, one row a message; the job carries only its id, and `sentAt` makes a second delivery a no-op. */

@@ -1,4 +1,4 @@
-import { boolean, integer, jsonb, pgTable, primaryKey, text, uniqueIndex, foreignKey } from "drizzle-orm/pg-core";
+import { boolean, foreignKey, integer, jsonb, pgTable, primaryKey, text, uniqueIndex } from "drizzle-orm/pg-core";
 import type { ShopSettings } from "@/lib/shops/schema";
 import { createdAt, id, instant, shopId, version } from "./columns";
 

@@ -13,9 +13,19 @@ import { invitationMail, passwordResetMail } from "@/lib/mail/templates";
 import { isStaffRole } from "./permissions";
 
 // what a role may do in the shop's work stands in permissions.ts; this is only the membership plugin's own part
-const statements = { organization: ["update", "delete"], member: ["create", "update", "delete"], invitation: ["create", "cancel"], ac: ["read"] } as const;
+const statements = {
+  organization: ["update", "delete"],
+  member: ["create", "update", "delete"],
+  invitation: ["create", "cancel"],
+  ac: ["read"],
+} as const;
 const access = createAccessControl(statements);
-const owner = access.newRole({ organization: ["update"], member: ["create", "update", "delete"], invitation: ["create", "cancel"], ac: ["read"] });
+const owner = access.newRole({
+  organization: ["update"],
+  member: ["create", "update", "delete"],
+  invitation: ["create", "cancel"],
+  ac: ["read"],
+});
 const plain = () => access.newRole({ ac: ["read"] });
 
 function requireStaffRole(role: string | string[] | null | undefined): void {
@@ -67,7 +77,13 @@ function build() {
         cancelPendingInvitationsOnReInvite: true,
         async sendInvitationEmail({ id, email, role, organization: shop, inviter }) {
           await sendMail(
-            invitationMail({ to: email, shopName: shop.name, inviterName: inviter.user.name, role: String(role), url: `${APP_URL}/invitation/${id}` }),
+            invitationMail({
+              to: email,
+              shopName: shop.name,
+              inviterName: inviter.user.name,
+              role: String(role),
+              url: `${APP_URL}/invitation/${id}`,
+            }),
           );
         },
         organizationHooks: {

@@ -24,7 +24,6 @@ export interface Ctx {
 
 export const asShopId = (id: string) => id as ShopId;
 
-
 /** Throws `forbidden` with a sentence that says who may. */
 export function authorize(ctx: Pick<Ctx, "actor">, action: Action): void {
   if (mayDo(ctx.actor.role, action)) return;

@@ -58,7 +58,8 @@ export async function staffCtx(): Promise<Ctx> {
   const session = await currentSession();
   if (!session) throw new AppError("unauthenticated", "Sign in first.");
   const shop = session.memberships.find((each) => each.shopId === session.activeShopId) ?? session.memberships[0];
-  if (!shop || !isStaffRole(shop.role)) throw new AppError("forbidden", "You do not belong to a shop yet. Ask its owner for an invitation.");
+  if (!shop || !isStaffRole(shop.role))
+    throw new AppError("forbidden", "You do not belong to a shop yet. Ask its owner for an invitation.");
   return {
     shopId: asShopId(shop.shopId),
     actor: { id: session.userId, name: session.name, role: shop.role },
@@ -77,4 +78,3 @@ export async function pageCtx(): Promise<Ctx> {
     throw error;
   }
 }
-

@@ -49,11 +49,19 @@ interface DatabaseError {
 function fromDatabase(error: unknown): AppError | null {
   const { code } = ((error as { cause?: unknown }).cause ?? error) as DatabaseError;
   if (code === "23505") return new AppError("conflict", "That already exists.", { cause: error });
-  if (code === "23503") return new AppError("not_found", "What this refers to does not exist, or belongs to another shop.", { cause: error });
+  if (code === "23503")
+    return new AppError("not_found", "What this refers to does not exist, or belongs to another shop.", {
+      cause: error,
+    });
   if (code === "23514") return new AppError("precondition", "The record does not allow this.", { cause: error });
-  if (code === "22021" || code === "22P05") return new AppError("invalid", "The text holds a character that can't be kept (a NUL). Remove it and send again.", { cause: error });
-  if (code === "22003" || code === "22008") return new AppError("invalid", "A number or a date is too large to be kept.", { cause: error });
-  if (code === "40001" || code === "40P01") return new AppError("conflict", "Two writes met. Try again.", { cause: error });
+  if (code === "22021" || code === "22P05")
+    return new AppError("invalid", "The text holds a character that can't be kept (a NUL). Remove it and send again.", {
+      cause: error,
+    });
+  if (code === "22003" || code === "22008")
+    return new AppError("invalid", "A number or a date is too large to be kept.", { cause: error });
+  if (code === "40001" || code === "40P01")
+    return new AppError("conflict", "Two writes met. Try again.", { cause: error });
   return null;
 }
 
@@ -62,9 +70,20 @@ export function toAppError(error: unknown): AppError {
   if (error instanceof ZodError) {
     const fields = error.issues.map((issue) => ({ pointer: pointerOf(issue.path), detail: issue.message }));
     const first = fields[0];
-    return new AppError("invalid", first ? `${first.pointer.slice(1) || "The request"}: ${first.detail}` : "The request does not fit.", { fields, cause: error });
+    return new AppError(
+      "invalid",
+      first ? `${first.pointer.slice(1) || "The request"}: ${first.detail}` : "The request does not fit.",
+      { fields, cause: error },
+    );
   }
-  return fromDatabase(error) ?? new AppError("internal", "This did not go through. Nothing was changed. Try again; if it stays, give us the request number.", { cause: error });
+  return (
+    fromDatabase(error) ??
+    new AppError(
+      "internal",
+      "This did not go through. Nothing was changed. Try again; if it stays, give us the request number.",
+      { cause: error },
+    )
+  );
 }
 
 export function problemOf(error: unknown, instance: string, requestId: string): Problem {

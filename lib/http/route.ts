@@ -24,7 +24,8 @@ export function assertOrigin(request: Request): void {
   const origin = request.headers.get("origin");
   const own = new URL(env().APP_URL);
   const allowed = [own.origin, own.origin.replace("//localhost", "//127.0.0.1")];
-  if (!origin || !allowed.includes(origin)) throw new AppError("forbidden", "This request did not come from this site's own pages.");
+  if (!origin || !allowed.includes(origin))
+    throw new AppError("forbidden", "This request did not come from this site's own pages.");
 }
 
 export async function readJson(request: Request): Promise<unknown> {
@@ -47,7 +48,13 @@ export function route<P = Record<string, never>>(handler: Handler<P>) {
     return guarded(request, requestId, async () => {
       const ctx = { ...(await staffCtx()), requestId };
       assertOrigin(request);
-      return handler({ request, ctx, params: await context.params, url: new URL(request.url), json: () => readJson(request) });
+      return handler({
+        request,
+        ctx,
+        params: await context.params,
+        url: new URL(request.url),
+        json: () => readJson(request),
+      });
     });
   };
 }
@@ -67,8 +74,12 @@ export async function guarded(request: Request, requestId: string, work: () => P
 /** The text of a fault goes to the log only; the message of a database error can quote a row, so its parameters stay out. */
 export function logFault(requestId: string, where: string, error: unknown): void {
   const cause = error instanceof Error && error.cause instanceof Error ? error.cause : error;
-  const line = cause instanceof Error ? `${cause.name}: ${cause.message}\n${cause.stack?.split("\n").slice(1, 5).join("\n")}` : String(cause);
+  const line =
+    cause instanceof Error
+      ? `${cause.name}: ${cause.message}\n${cause.stack?.split("\n").slice(1, 5).join("\n")}`
+      : String(cause);
   console.error(JSON.stringify({ at: new Date().toISOString(), requestId, where, fault: line }));
 }
 
-export const ok = (value: unknown, init: ResponseInit = {}) => Response.json(value ?? null, { ...init, headers: { "cache-control": "no-store", ...init.headers } });
+export const ok = (value: unknown, init: ResponseInit = {}) =>
+  Response.json(value ?? null, { ...init, headers: { "cache-control": "no-store", ...init.headers } });

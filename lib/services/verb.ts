@@ -27,7 +27,12 @@ export interface PerformOptions {
 }
 
 /** Parse → permission → transaction { first answer of this key, or rule, write, audit, jobs } → reply. */
-export async function perform<I extends z.ZodType, O>(verb: Verb<I, O>, ctx: Ctx, raw: z.input<I>, options: PerformOptions = {}): Promise<O> {
+export async function perform<I extends z.ZodType, O>(
+  verb: Verb<I, O>,
+  ctx: Ctx,
+  raw: z.input<I>,
+  options: PerformOptions = {},
+): Promise<O> {
   authorize(ctx, verb.action);
   const input = verb.input.parse(raw);
   const reason = typeof input === "object" && input !== null && "reason" in input ? String(input.reason ?? "") : "";
@@ -43,16 +48,26 @@ export async function perform<I extends z.ZodType, O>(verb: Verb<I, O>, ctx: Ctx
         .values({ shopId: ctx.shopId, key, verb: verb.name, actorId: ctx.actor.id, inputHash, at: ctx.now })
         .onConflictDoNothing()
         .returning({ key: idempotency.key });
-      const mine = and(eq(idempotency.shopId, ctx.shopId), eq(idempotency.actorId, ctx.actor.id), eq(idempotency.key, key));
+      const mine = and(
+        eq(idempotency.shopId, ctx.shopId),
+        eq(idempotency.actorId, ctx.actor.id),
+        eq(idempotency.key, key),
+      );
       if (claimed.length === 0) {
-        const [first] = await tx.select({ verb: idempotency.verb, inputHash: idempotency.inputHash, answer: idempotency.answer }).from(idempotency).where(mine);
+        const [first] = await tx
+          .select({ verb: idempotency.verb, inputHash: idempotency.inputHash, answer: idempotency.answer })
+          .from(idempotency)
+          .where(mine);
         if (first?.verb !== verb.name || first.inputHash !== inputHash) {
           throw new AppError("conflict", "This request's key was used before for something else. Load the page again.");
         }
         return (first.answer as { value: O }).value;
       }
       const value = await verb.run(tx, ctx, input);
-      await tx.update(idempotency).set({ answer: sql`${JSON.stringify({ value: value ?? null })}::jsonb` }).where(mine);
+      await tx
+        .update(idempotency)
+        .set({ answer: sql`${JSON.stringify({ value: value ?? null })}::jsonb` })
+        .where(mine);
       return value;
     },
     { verb: verb.name, reason },

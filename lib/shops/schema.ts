@@ -29,7 +29,9 @@ export const shopSettings = z.object({
   paperWord: z.enum(["estimate", "quotation"]).default("estimate"),
   taxName: z.string().max(40).default("Sales tax"),
   taxBasisPoints: z.number().int().min(0).max(10_000).default(0),
-  taxKinds: z.array(z.enum(["labour", "part", "sublet", "fee", "diagnosis"])).default(["labour", "part", "sublet", "fee", "diagnosis"]),
+  taxKinds: z
+    .array(z.enum(["labour", "part", "sublet", "fee", "diagnosis"]))
+    .default(["labour", "part", "sublet", "fee", "diagnosis"]),
   rounding: z.enum(["line-then-sum", "sum-then-tax"]).default("sum-then-tax"),
   excessRule: z.enum(EXCESS_RULES).default("any"),
   defaultCeilingMinor: z.number().int().min(0).max(100_000_000).default(18_000),
@@ -45,8 +47,14 @@ export const shopSettings = z.object({
   bands: z.record(z.string(), z.unknown()).default({}),
   warrantyText: z.string().max(1000).default("Parts and labour: twelve months or 20,000 km, whichever comes first."),
   legalText: z.string().max(2000).default(""),
-  dayOpens: z.string().regex(/^\d\d:\d\d$/).default("08:00"),
-  dayCloses: z.string().regex(/^\d\d:\d\d$/).default("18:00"),
+  dayOpens: z
+    .string()
+    .regex(/^\d\d:\d\d$/)
+    .default("08:00"),
+  dayCloses: z
+    .string()
+    .regex(/^\d\d:\d\d$/)
+    .default("18:00"),
 });
 
 export type ShopSettings = z.output<typeof shopSettings>;

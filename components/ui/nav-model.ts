@@ -1,3 +1,4 @@
+import type { PathStage } from "@/lib/cases/stages";
 import type { Density } from "./device";
 
 export interface NavItem {
@@ -12,18 +13,8 @@ export interface PersonView {
   role: string;
 }
 
-/** The seven stages in their order, as the screens name them. */
-export const STAGES = ["intake", "testing", "quoting", "waiting", "repair", "proof", "closed"] as const;
-export type StageId = (typeof STAGES)[number];
-export const STAGE_WORDS: Record<StageId, string> = {
-  intake: "Intake",
-  testing: "Testing",
-  quoting: "Quoting",
-  waiting: "Asked",
-  repair: "Repair",
-  proof: "Proof",
-  closed: "Closed",
-};
+export { PATH as STAGES, STAGE_LABELS as STAGE_WORDS } from "@/lib/cases/stages";
+export type StageId = PathStage;
 
 /** Where a case stands. `held` is a case on hold (it remembers the stage it came from). */
 export interface StageView {

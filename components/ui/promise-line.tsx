@@ -46,7 +46,7 @@ export function PromiseLine({ promises, now, timeZone, opens, closes }: PromiseL
       : `Promises today: ${promises.length}, ${late.length === 0 ? "none late" : `late: ${late.map((p) => p.number).join(", ")}`}`;
   return (
     <div className="dayline" ref={ref}>
-      <svg className="chart" width={width} height="62" viewBox={`0 0 ${width} 62`} role="img" aria-label={spoken}>
+      <svg className="chart" width={width} height="62" viewBox={`0 0 ${width} 62`} role="group" aria-label={spoken}>
         {start > 10 && (
           <text x="0" y="44" className="t">
             Promised today
@@ -66,39 +66,47 @@ export function PromiseLine({ promises, now, timeZone, opens, closes }: PromiseL
         <text x={nowX < 90 ? nowX + 7 : nowX - 7} y="12" textAnchor={nowX < 90 ? "start" : "end"} className="heavy">
           Now {formatClock(now, timeZone)}
         </text>
-        {stagger(promises, (promise) => clampX(minuteOfDay(promise.at, timeZone))).map(({ promise, at, row }) => (
-          <g key={promise.number}>
-            <path className={promise.isLate ? "inkline w3" : "inkline w15"} d={`M${at} ${26 - row * 13}V40`} />
-            <Link href={promise.href} aria-label={`Case ${promise.number}${promise.isLate ? ", late" : ""}`}>
-              {promise.isLate && (
-                <rect className="alarmbox" x={at + 3} y={23 - row * 13} width={62} height={15} rx={2} />
+        {placed(promises, (promise) => clampX(minuteOfDay(promise.at, timeZone))).map(({ promise, at, row }) => {
+          const y = 34 - (row ?? 0) * 13;
+          return (
+            <g key={promise.number}>
+              <path className={promise.isLate ? "inkline w3" : "inkline w15"} d={`M${at} ${y - 8}V40`} />
+              {row !== null && (
+                <Link href={promise.href} aria-label={`Case ${promise.number}${promise.isLate ? ", late" : ""}`}>
+                  {promise.isLate && <rect className="alarmbox" x={at + 3} y={y - 11} width={62} height={15} rx={2} />}
+                  <text className={promise.isLate ? "m onalarm" : promise.isMine ? "m heavy" : "m"} x={at + 7} y={y}>
+                    {promise.number}
+                  </text>
+                  {promise.isLate && (
+                    <text className="onalarm" x={at + 38} y={y}>
+                      late
+                    </text>
+                  )}
+                </Link>
               )}
-              <text
-                className={promise.isLate ? "m onalarm" : promise.isMine ? "m heavy" : "m"}
-                x={at + 7}
-                y={34 - row * 13}
-              >
-                {promise.number}
-                {promise.isLate && " late"}
-              </text>
-            </Link>
-          </g>
-        ))}
+            </g>
+          );
+        })}
       </svg>
     </div>
   );
 }
 
-/** Labels that would touch go up a row (two at most), in order of time. */
-function stagger(promises: readonly PromiseMark[], place: (promise: PromiseMark) => number) {
-  const ends = [-99, -99];
+/**
+ * A label that would touch another goes up a row; where both rows are taken it is left out and the tick stays. Late
+ * ones choose first, then mine.
+ */
+function placed(promises: readonly PromiseMark[], place: (promise: PromiseMark) => number) {
+  const taken: { row: number; from: number; to: number }[] = [];
+  const rank = (promise: PromiseMark) => (promise.isLate ? 0 : promise.isMine ? 1 : 2);
   return [...promises]
-    .sort((a, b) => a.at.localeCompare(b.at))
+    .sort((a, b) => rank(a) - rank(b) || a.at.localeCompare(b.at))
     .map((promise) => {
       const at = place(promise);
-      const free = ends.findIndex((end) => at >= end);
-      const row = free === -1 ? 1 : free;
-      ends[row] = at + (promise.isLate ? 70 : 42);
+      const to = at + (promise.isLate ? 70 : 42);
+      const row = [0, 1].find((r) => taken.every((t) => t.row !== r || to <= t.from || at >= t.to)) ?? null;
+      if (row !== null) taken.push({ row, from: at, to });
       return { promise, at, row };
-    });
+    })
+    .sort((a, b) => a.at - b.at);
 }

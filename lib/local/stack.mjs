@@ -1,0 +1,76 @@
+import { readFile } from "node:fs/promises";
+import { setTimeout as sleep } from "node:timers/promises";
+import { ensureBuild } from "./build.mjs";
+import { childrenIn } from "./children.mjs";
+import { bin } from "./paths.mjs";
+import { run } from "./run.mjs";
+import { Plain, step } from "./say.mjs";
+
+const tsx = (script, ...args) => [bin("tsx"), ["--tsconfig", "tsconfig.tools.json", script, ...args]];
+
+const tail = (path) =>
+  readFile(path, "utf8").then(
+    (text) => text.trimEnd().split("\n").slice(-20).join("\n"),
+    () => "",
+  );
+
+/** Waits until the address answers anything at all. */
+async function answers(url, isOver) {
+  for (;;) {
+    if (isOver()) return false;
+    const reply = await fetch(url, { redirect: "manual", signal: AbortSignal.timeout(30_000) }).catch(() => undefined);
+    if (reply) {
+      await reply.body?.cancel();
+      return true;
+    }
+    await sleep(100);
+  }
+}
+
+/**
+ * Brings up everything above the database: stand-ins, migrations, demo data, build, web, worker.
+ *
+ * @param {object} options
+ * @param {Awaited<ReturnType<typeof import("./settings.mjs").settings>>} options.settings
+ * @param {string} options.folder
+ * @param {boolean} options.dev serve from the sources with hot reload
+ * @param {boolean} options.seed
+ * @param {(name: string) => void} options.onGivingUp called when a process keeps dying
+ * @param {(stop: () => Promise<void>) => void} options.onStop takes what ends the processes, before any is started
+ */
+export async function startStack({ settings: { env, webPort, standIns }, folder, dev, seed, onGivingUp, onStop }) {
+  let failed;
+  const children = childrenIn({
+    folder,
+    onGivingUp: (name) => {
+      failed = name;
+      onGivingUp(name);
+    },
+  });
+  onStop(children.stop);
+  const up = async (name, url) => {
+    if (await answers(url, () => failed === name)) return;
+    throw new Plain(`${name} does not start. Its log (${children.logOf(name)}):\n${await tail(children.logOf(name))}`);
+  };
+
+  if (standIns.length > 0) {
+    children.start("stand-ins", ...tsx("lib/local/stand-ins.ts"), env);
+    const health = env.STAND_INS.includes("mail") ? env.MAILBOX_URL : env.UPLOADTHING_INGEST_URL;
+    await step("Starting the stand-ins for mail and files", () => up("stand-ins", `${health}/health`));
+  }
+  const data = async () => {
+    await step("Bringing the database up to date", () => run(...tsx("db/migrate.ts"), { env }));
+    if (seed) await step("Filling the demo shop", () => run(...tsx("db/seed/run.ts"), { env }));
+  };
+  // both must end before the caller cleans up, whichever fails
+  const outcomes = await Promise.allSettled([data(), dev ? undefined : ensureBuild(env)]);
+  const fault = outcomes.find((outcome) => outcome.status === "rejected");
+  if (fault) throw fault.reason;
+
+  children.start("worker", ...tsx("lib/jobs/worker.ts"), env);
+  // "localhost" and IPv4 first: reachable by either name, from this machine only, and redirects keep the name
+  const webEnv = { ...env, NODE_OPTIONS: `${env.NODE_OPTIONS ?? ""} --dns-result-order=ipv4first`.trim() };
+  const host = process.env.HOST || "localhost";
+  children.start("web", bin("next"), [dev ? "dev" : "start", "-p", String(webPort), "-H", host], webEnv, { show: dev });
+  await step("Starting the web server", () => up("web", `http://localhost:${webPort}/`));
+}

@@ -648,7 +648,8 @@ CREATE INDEX "authorizations_of_case" ON "authorizations" USING btree ("shop_id"
 CREATE UNIQUE INDEX "case_codes_once" ON "case_codes" USING btree ("shop_id","case_id","phase","code","status");--> statement-breakpoint
 CREATE INDEX "case_notes_of_case" ON "case_notes" USING btree ("shop_id","case_id","at");--> statement-breakpoint
 CREATE UNIQUE INDEX "cases_number" ON "cases" USING btree ("shop_id","number");--> statement-breakpoint
-CREATE INDEX "cases_open" ON "cases" USING btree ("shop_id","waiting_on","number");--> statement-breakpoint
+CREATE INDEX "cases_open" ON "cases" USING btree ("shop_id","waiting_on","number") WHERE stage not in ('closed', 'released');--> statement-breakpoint
+CREATE INDEX "cases_open_by_number" ON "cases" USING btree ("shop_id","number") WHERE stage not in ('closed', 'released');--> statement-breakpoint
 CREATE INDEX "cases_stage" ON "cases" USING btree ("shop_id","stage","stage_since");--> statement-breakpoint
 CREATE INDEX "cases_technician_work" ON "cases" USING btree ("shop_id","technician_id","stage");--> statement-breakpoint
 CREATE INDEX "cases_promised" ON "cases" USING btree ("shop_id","promised_at");--> statement-breakpoint

@@ -1,3 +1,4 @@
+import { sql } from "drizzle-orm";
 import {
   boolean,
   foreignKey,
@@ -86,7 +87,9 @@ export const cases = pgTable(
       foreignColumns: [t.shopId, t.id],
     }).onDelete("restrict"),
     // the cases list: open work of a shop by whom it waits on
-    index("cases_open").on(t.shopId, t.waitingOn, t.number),
+    index("cases_open").on(t.shopId, t.waitingOn, t.number).where(sql`stage not in ('closed', 'released')`),
+    // the cases list, everyone's: the open cases alone, however many are closed
+    index("cases_open_by_number").on(t.shopId, t.number).where(sql`stage not in ('closed', 'released')`),
     // the cases list by stage (parked, closed this week)
     index("cases_stage").on(t.shopId, t.stage, t.stageSince),
     // "mine": a technician's work

@@ -36,54 +36,80 @@ function trimReading(sample: Sample): RevisionReading | null {
   };
 }
 
+interface Shown extends RevisionReading {
+  distance: number;
+}
+
+/** Readings of one phase that have a usual band, each with how far it lies outside (negative: inside). */
+function bandedReadings(samples: readonly Sample[], vehicle: CaseVehicle): Shown[] {
+  const shown: Shown[] = [];
+  for (const sample of samples) {
+    for (const [id, raw] of Object.entries(sample.values)) {
+      const value = numberOf(raw);
+      if (value === null || !(id in PARAMETERS)) continue;
+      const parameter = id as ParameterId;
+      const { state, band, family } = judge(parameter, value, sample.mode, vehicle);
+      if (!band || state === "impossible" || state === "unbanded") continue;
+      const low = band.low ?? Math.min(0, value);
+      const high = band.high ?? Math.max(low + 1, Math.abs(low) * 2);
+      const at = (value - low) / (high - low || 1);
+      const { label, unit, decimals } = PARAMETERS[parameter];
+      shown.push({
+        label: `${label}, ${(PLACES[sample.mode] ?? sample.mode).toLowerCase()}`,
+        value: `${value.toFixed(decimals)} ${unit}`.trim(),
+        at,
+        family,
+        inside: state !== "outside",
+        distance: Math.max(-at, at - 1),
+      });
+    }
+  }
+  return shown;
+}
+
+const trimsOf = (samples: readonly Sample[]): RevisionReading[] =>
+  (["idling", "cruising", "raised-idle", "accelerating"] as const)
+    .flatMap((mode) => samples.filter((sample) => sample.mode === mode).slice(0, 1))
+    .map(trimReading)
+    .filter((reading) => reading !== null);
+
+const bare = ({ distance: _, ...reading }: Shown): RevisionReading => reading;
+
 /**
- * The few readings a customer is shown: fuel correction standing and moving where there is any, else the readings that
- * lie furthest outside their usual band. Returned with a title in plain words; `at` is 0 … 1 inside the band.
+ * The few readings a customer is shown: fuel correction standing and moving where it deviates, else the readings that
+ * lie furthest outside their usual band. The title is in plain words; `at` is 0 … 1 inside the band.
  */
 export function customerReadings(
   samples: readonly Sample[],
   vehicle: CaseVehicle,
 ): { title: string; readings: RevisionReading[] } {
   const found = samples.filter((sample) => sample.phase === "before");
-  const trims = (["idling", "cruising", "raised-idle", "accelerating"] as const)
-    .flatMap((mode) => found.filter((sample) => sample.mode === mode).slice(0, 1))
-    .map(trimReading)
-    .filter((reading) => reading !== null);
+  const trims = trimsOf(found);
   if (trims.some((reading) => !reading.inside)) {
-    const extra = trims.some((reading) => reading.family === "lean");
-    return {
-      title: extra
-        ? "How much extra fuel the engine has to add to make up for the air."
-        : "How much fuel the engine has to hold back.",
-      readings: trims.slice(0, 3),
-    };
+    const isLean = trims.some((reading) => reading.family === "lean");
+    const title = isLean
+      ? "How much extra fuel the engine has to add to make up for the air."
+      : "How much fuel the engine has to hold back.";
+    return { title, readings: trims.slice(0, 3) };
   }
-  const outside: (RevisionReading & { distance: number })[] = [];
-  for (const sample of found) {
-    for (const [id, raw] of Object.entries(sample.values)) {
-      const value = numberOf(raw);
-      if (value === null || !(id in PARAMETERS)) continue;
-      const parameter = id as ParameterId;
-      const judged = judge(parameter, value, sample.mode, vehicle);
-      const band = judged.band;
-      if (judged.state !== "outside" || !band) continue;
-      const low = band.low ?? Math.min(0, value);
-      const high = band.high ?? Math.max(low + 1, Math.abs(low) * 2);
-      const at = (value - low) / (high - low || 1);
-      const { label, unit, decimals } = PARAMETERS[parameter];
-      outside.push({
-        label: `${label}, ${(PLACES[sample.mode] ?? sample.mode).toLowerCase()}`,
-        value: `${value.toFixed(decimals)} ${unit}`.trim(),
-        at,
-        family: judged.family,
-        inside: false,
-        distance: Math.max(-at, at - 1),
-      });
-    }
-  }
+  const outside = bandedReadings(found, vehicle).filter((reading) => !reading.inside);
   outside.sort((a, b) => b.distance - a.distance);
   return {
     title: outside.length > 0 ? "Where your engine sits against the usual range." : "",
-    readings: outside.slice(0, 3).map(({ distance: _, ...reading }) => reading),
+    readings: outside.slice(0, 3).map(bare),
   };
+}
+
+/** The readings a customer was shown, each with the one taken after the repair in the same place, where there is one. */
+export function pairedReadings(
+  samples: readonly Sample[],
+  vehicle: CaseVehicle,
+): { label: string; before: RevisionReading; after: RevisionReading | null }[] {
+  const repaired = samples.filter((sample) => sample.phase === "after");
+  const after = [...trimsOf(repaired), ...bandedReadings(repaired, vehicle).map(bare)];
+  return customerReadings(samples, vehicle).readings.map((before) => ({
+    label: before.label,
+    before,
+    after: after.find((each) => each.label === before.label) ?? null,
+  }));
 }

@@ -30,19 +30,17 @@ export const registerFile = defineVerb({
   async run(tx, ctx, { caseId, workJobId, ...file }) {
     await lockOpenCase(tx, ctx, caseId);
     const id = newId("file", ctx.now.getTime());
-    await tx
-      .insert(files)
-      .values({
-        shopId: ctx.shopId,
-        id,
-        caseId,
-        ...file,
-        workJobId: workJobId ?? null,
-        state: "processing",
-        byId: ctx.actor.id,
-        byName: ctx.actor.name,
-        at: ctx.now,
-      });
+    await tx.insert(files).values({
+      shopId: ctx.shopId,
+      id,
+      caseId,
+      ...file,
+      workJobId: workJobId ?? null,
+      state: "processing",
+      byId: ctx.actor.id,
+      byName: ctx.actor.name,
+      at: ctx.now,
+    });
     await enqueue(tx, "process_file", { shopId: ctx.shopId, fileId: id }, { key: `file:${id}` });
     return { fileId: id };
   },

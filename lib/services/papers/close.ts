@@ -17,7 +17,8 @@ import { queueMail } from "../mail/queue";
 import { makeLink } from "../quotes/links";
 import { digestOf } from "../quotes/send";
 import { defineVerb } from "../verb";
-import { invoicePaperModel, invoiceSnapshot, releasePaperModel, releaseSnapshot } from "./models";
+import { invoicePaperModel, releasePaperModel } from "./models";
+import { invoiceSnapshot, releaseSnapshot } from "./snapshot";
 
 const YEAR_MS = 365 * 86_400_000;
 
@@ -174,20 +175,18 @@ export const recordPayment = defineVerb({
     if (paid + amountMinor > paper.totalMinor)
       throw invalidField("/amountMinor", "That is more than is still owed on this invoice.");
     const id = newId("pay", ctx.now.getTime());
-    await tx
-      .insert(payments)
-      .values({
-        shopId: ctx.shopId,
-        id,
-        caseId,
-        paperId,
-        how,
-        amountMinor,
-        currency: paper.currency,
-        reference: reference ?? null,
-        takenByName: ctx.actor.name,
-        at: ctx.now,
-      });
+    await tx.insert(payments).values({
+      shopId: ctx.shopId,
+      id,
+      caseId,
+      paperId,
+      how,
+      amountMinor,
+      currency: paper.currency,
+      reference: reference ?? null,
+      takenByName: ctx.actor.name,
+      at: ctx.now,
+    });
     return { paymentId: id, balanceMinor: paper.totalMinor - paid - amountMinor };
   },
 });

@@ -178,18 +178,16 @@ export const askQuestion = defineVerb({
     if (ctx.link?.kind !== "quote") throw notFound("The quote");
     const parts = await openForWrite(tx, ctx, ctx.link.caseId);
     const id = newId("ask", ctx.now.getTime());
-    await tx
-      .insert(questions)
-      .values({
-        shopId: ctx.shopId,
-        id,
-        caseId: parts.row.id,
-        revisionId: ctx.link.targetId,
-        fromCustomer: true,
-        text,
-        byName: parts.customer.name,
-        at: ctx.now,
-      });
+    await tx.insert(questions).values({
+      shopId: ctx.shopId,
+      id,
+      caseId: parts.row.id,
+      revisionId: ctx.link.targetId,
+      fromCustomer: true,
+      text,
+      byName: parts.customer.name,
+      at: ctx.now,
+    });
     const shopMail = settingsOf(parts).email;
     if (shopMail)
       await queueMail(tx, ctx, {
@@ -210,18 +208,16 @@ export const answerQuestion = defineVerb({
     const parts = await openForWrite(tx, ctx, caseId);
     if (!parts.revisions.some((each) => each.id === revisionId)) throw notFound("The revision");
     const id = newId("ask", ctx.now.getTime());
-    await tx
-      .insert(questions)
-      .values({
-        shopId: ctx.shopId,
-        id,
-        caseId,
-        revisionId,
-        fromCustomer: false,
-        text,
-        byName: ctx.actor.name,
-        at: ctx.now,
-      });
+    await tx.insert(questions).values({
+      shopId: ctx.shopId,
+      id,
+      caseId,
+      revisionId,
+      fromCustomer: false,
+      text,
+      byName: ctx.actor.name,
+      at: ctx.now,
+    });
     if (parts.customer.email) {
       await queueMail(tx, ctx, {
         caseId,

@@ -42,3 +42,18 @@ export function signal(pid, name) {
     if (error.code !== "ESRCH") throw error;
   }
 }
+
+/**
+ * Calls back when npm, or the shell it puts in between, has ended: that shell does not pass a SIGTERM on, so the driver
+ * would stay behind. Started without npm it may outlive whoever started it.
+ */
+export function whenOrphaned(callback) {
+  if (!process.env.npm_lifecycle_event) return;
+  const parent = process.ppid;
+  const timer = setInterval(() => {
+    if (process.ppid === parent) return;
+    clearInterval(timer);
+    callback();
+  }, 300);
+  timer.unref();
+}

@@ -5,6 +5,10 @@ import { freePort } from "./ports.mjs";
 const FIRST = { web: 3000, smtp: 4025, mailbox: 4026, files: 4027 };
 const FIRST_IN_TESTS = { web: 3400, smtp: 4425, mailbox: 4426, files: 4427 };
 
+/** What tests must never take from the environment they run in: they would reach a real database, or send real mail. */
+const REPLACED =
+  /^(DATABASE_URL|APP_DATABASE_URL|AUTH_DATABASE_URL|APP_URL|BETTER_AUTH_SECRET|SMTP_URL|MAIL.*|UPLOADTHING_.*|STAND_INS|LOCAL_DIR|DEMO_FILE|PORT|HOST)$/;
+
 /**
  * The environment of everything that is started. What is set already stays; a loopback stand-in serves what is not.
  *
@@ -17,19 +21,10 @@ const FIRST_IN_TESTS = { web: 3400, smtp: 4425, mailbox: 4426, files: 4427 };
  * @returns {Promise<{ env: NodeJS.ProcessEnv, webPort: number, standIns: string[] }>}
  */
 export async function settings({ folder, secrets, cluster, dev = false, test = false }) {
-  const given = test
-    ? {
-        ...process.env,
-        SMTP_URL: "",
-        UPLOADTHING_TOKEN: "",
-        APP_URL: "",
-        BETTER_AUTH_SECRET: "",
-        APP_DATABASE_URL: "",
-        AUTH_DATABASE_URL: "",
-      }
-    : process.env;
+  const given = { ...process.env };
+  if (test) for (const name of Object.keys(given)) if (REPLACED.test(name)) delete given[name];
   const first = test ? FIRST_IN_TESTS : FIRST;
-  const webPort = await freePort(Number(test ? 0 : given.PORT) || first.web);
+  const webPort = await freePort(Number(given.PORT) || first.web);
   const standIns = [];
   const made = {
     NODE_ENV: dev ? "development" : "production",

@@ -1,4 +1,5 @@
 import { readFile } from "node:fs/promises";
+import { get } from "node:http";
 import { setTimeout as sleep } from "node:timers/promises";
 import { ensureBuild } from "./build.mjs";
 import { childrenIn } from "./children.mjs";
@@ -6,7 +7,9 @@ import { bin } from "./paths.mjs";
 import { run } from "./run.mjs";
 import { Plain, step } from "./say.mjs";
 
-const tsx = (script, ...args) => [bin("tsx"), ["--tsconfig", "tsconfig.tools.json", script, ...args]];
+/** A TypeScript program, run in one process: the loader's own command would put another one in between. */
+const program = (script) => [process.execPath, ["--import", "tsx", script]];
+const programEnv = (env) => ({ ...env, TSX_TSCONFIG_PATH: "tsconfig.tools.json" });
 
 const tail = (path) =>
   readFile(path, "utf8").then(
@@ -14,17 +17,23 @@ const tail = (path) =>
     () => "",
   );
 
-/** Waits until the address answers anything at all. */
+/** Whether the address answers anything at all; the connection is not kept, since a server waits for it when it ends. */
+const answersNow = (url) =>
+  new Promise((resolve) => {
+    const request = get(url, { agent: false, timeout: 60_000 }, (response) => {
+      response.resume();
+      response.once("close", () => resolve(true));
+    });
+    request.once("timeout", () => request.destroy());
+    request.once("error", () => resolve(false));
+  });
+
 async function answers(url, isOver) {
-  for (;;) {
+  while (!(await answersNow(url))) {
     if (isOver()) return false;
-    const reply = await fetch(url, { redirect: "manual", signal: AbortSignal.timeout(30_000) }).catch(() => undefined);
-    if (reply) {
-      await reply.body?.cancel();
-      return true;
-    }
     await sleep(100);
   }
+  return true;
 }
 
 /**
@@ -54,20 +63,20 @@ export async function startStack({ settings: { env, webPort, standIns }, folder,
   };
 
   if (standIns.length > 0) {
-    children.start("stand-ins", ...tsx("lib/local/stand-ins.ts"), env);
+    children.start("stand-ins", ...program("lib/local/stand-ins.ts"), programEnv(env));
     const health = env.STAND_INS.includes("mail") ? env.MAILBOX_URL : env.UPLOADTHING_INGEST_URL;
     await step("Starting the stand-ins for mail and files", () => up("stand-ins", `${health}/health`));
   }
   const data = async () => {
-    await step("Bringing the database up to date", () => run(...tsx("db/migrate.ts"), { env }));
-    if (seed) await step("Filling the demo shop", () => run(...tsx("db/seed/run.ts"), { env }));
+    await step("Bringing the database up to date", () => run(...program("db/migrate.ts"), { env: programEnv(env) }));
+    if (seed) await step("Filling the demo shop", () => run(...program("db/seed/run.ts"), { env: programEnv(env) }));
   };
   // both must end before the caller cleans up, whichever fails
   const outcomes = await Promise.allSettled([data(), dev ? undefined : ensureBuild(env)]);
   const fault = outcomes.find((outcome) => outcome.status === "rejected");
   if (fault) throw fault.reason;
 
-  children.start("worker", ...tsx("lib/jobs/worker.ts"), env);
+  children.start("worker", ...program("lib/jobs/worker.ts"), programEnv(env));
   // "localhost" and IPv4 first: reachable by either name, from this machine only, and redirects keep the name
   const webEnv = { ...env, NODE_OPTIONS: `${env.NODE_OPTIONS ?? ""} --dns-result-order=ipv4first`.trim() };
   const host = process.env.HOST || "localhost";

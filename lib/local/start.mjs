@@ -7,7 +7,7 @@ import { startCluster } from "./cluster.mjs";
 import { ensureDebian } from "./debian.mjs";
 import { ensurePackages } from "./packages.mjs";
 import { localDir } from "./paths.mjs";
-import { birthOf } from "./processes.mjs";
+import { birthOf, whenOrphaned } from "./processes.mjs";
 import { endRunning } from "./run.mjs";
 import { Plain, report, say } from "./say.mjs";
 import { secretsIn } from "./secrets.mjs";
@@ -42,6 +42,8 @@ for (const name of ["SIGINT", "SIGTERM", "SIGHUP"]) {
     void stop(0);
   });
 }
+
+whenOrphaned(() => void stop(0));
 
 async function cluster(secrets) {
   if (process.env.DATABASE_URL) return undefined;

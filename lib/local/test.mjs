@@ -5,7 +5,7 @@ import { removeCluster, startCluster } from "./cluster.mjs";
 import { ensureDebian } from "./debian.mjs";
 import { ensurePackages } from "./packages.mjs";
 import { bin, localDir } from "./paths.mjs";
-import { isAlive } from "./processes.mjs";
+import { isAlive, whenOrphaned } from "./processes.mjs";
 import { endRunning, run } from "./run.mjs";
 import { Plain, report, say } from "./say.mjs";
 import { secretsIn } from "./secrets.mjs";
@@ -34,6 +34,8 @@ function stop(code) {
 }
 
 for (const name of ["SIGINT", "SIGTERM", "SIGHUP"]) process.on(name, () => void stop(130));
+
+whenOrphaned(() => void stop(130));
 
 const readJson = (path) => readFile(path, "utf8").then(JSON.parse, () => undefined);
 

@@ -7,7 +7,7 @@ const FIRST_IN_TESTS = { web: 3400, smtp: 4425, mailbox: 4426, files: 4427 };
 
 /** What tests must never take from the environment they run in: they would reach a real database, or send real mail. */
 const REPLACED =
-  /^(DATABASE_URL|APP_DATABASE_URL|AUTH_DATABASE_URL|APP_URL|BETTER_AUTH_SECRET|SMTP_URL|MAIL.*|UPLOADTHING_.*|STAND_INS|LOCAL_DIR|DEMO_FILE|PORT|HOST)$/;
+  /^(DATABASE_URL|APP_DATABASE_URL|AUTH_DATABASE_URL|APP_URL|BETTER_AUTH_SECRET|SMTP_URL|MAIL.*|UPLOADTHING_.*|STAND_INS|LOCAL_DIR|DEMO_FILE|PORT|LISTEN_HOST)$/;
 
 /**
  * The environment of everything that is started. What is set already stays; a loopback stand-in serves what is not.

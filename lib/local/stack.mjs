@@ -79,7 +79,9 @@ export async function startStack({ settings: { env, webPort, standIns }, folder,
   children.start("worker", ...program("lib/jobs/worker.ts"), programEnv(env));
   // "localhost" and IPv4 first: reachable by either name, from this machine only, and redirects keep the name
   const webEnv = { ...env, NODE_OPTIONS: `${env.NODE_OPTIONS ?? ""} --dns-result-order=ipv4first`.trim() };
-  const host = process.env.HOST || "localhost";
+  const host = env.LISTEN_HOST || "localhost";
   children.start("web", bin("next"), [dev ? "dev" : "start", "-p", String(webPort), "-H", host], webEnv, { show: dev });
-  await step("Starting the web server", () => up("web", `http://localhost:${webPort}/`));
+  await step("Starting the web server", () =>
+    up("web", `http://${host === "0.0.0.0" ? "localhost" : host}:${webPort}/`),
+  );
 }

@@ -21,7 +21,7 @@ const HELP = `Starts Firedeck on this machine.
   npm start -- --no-demo     without the demo shop
   npm start -- --demo        with it, even on your own DATABASE_URL
 
-PORT, HOST, DATABASE_URL, SMTP_URL, UPLOADTHING_TOKEN and the rest of the environment replace what is started by default.`;
+PORT, LISTEN_HOST, DATABASE_URL, SMTP_URL, UPLOADTHING_TOKEN and the rest of the environment replace what is started by default.`;
 
 const toStop = [];
 let stopping;

@@ -16,7 +16,10 @@ export async function postAuth<T = unknown>(path: string, body: Record<string, u
     const data = (await response.json().catch(() => null)) as
       | (T & { message?: string; detail?: string; errors?: { pointer: string }[] })
       | null;
-    const message = response.status === 429 ? "Too many tries. Wait ten seconds, then try again." : (data?.detail ?? data?.message ?? "");
+    const message =
+      response.status === 429
+        ? "Too many tries. Wait ten seconds, then try again."
+        : (data?.detail ?? data?.message ?? "");
     return { ok: response.ok, data, message, pointer: data?.errors?.[0]?.pointer };
   } catch {
     return { ok: false, data: null, message: "No connection. What you typed is still here; try again." };

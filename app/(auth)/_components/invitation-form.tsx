@@ -27,7 +27,10 @@ const schema = z.object({
 export function InvitationForm({ id, email, shopName, inviterName, roleWords, need }: InvitationFormProps) {
   const router = useRouter();
   const [failure, setFailure] = useState("");
-  const form = useForm({ resolver: zodResolver(schema), defaultValues: { name: "", password: need === "nothing" ? "----------" : "" } });
+  const form = useForm({
+    resolver: zodResolver(schema),
+    defaultValues: { name: "", password: need === "nothing" ? "----------" : "" },
+  });
   const { errors, isSubmitting } = form.formState;
 
   const send = form.handleSubmit(async ({ name, password }) => {
@@ -39,7 +42,12 @@ export function InvitationForm({ id, email, shopName, inviterName, roleWords, ne
     }
     if (need === "sign-in") {
       const entered = await postAuth("/api/auth/sign-in/email", { email, password });
-      if (!entered.ok) return form.setError("password", { message: "That password does not go with this e-mail." }, { shouldFocus: true });
+      if (!entered.ok)
+        return form.setError(
+          "password",
+          { message: "That password does not go with this e-mail." },
+          { shouldFocus: true },
+        );
     }
     const joined = await postAuth("/api/auth/organization/accept-invitation", { invitationId: id });
     if (!joined.ok) return setFailure(joined.message || "The invitation could not be taken up. Ask for a new one.");
@@ -53,7 +61,15 @@ export function InvitationForm({ id, email, shopName, inviterName, roleWords, ne
       <p>
         {inviterName} asks you to work here as {roleWords}. You sign in as {email}.
       </p>
-      {need === "account" && <TextInput id="name" label="Your name" autoComplete="name" error={errors.name?.message} {...form.register("name")} />}
+      {need === "account" && (
+        <TextInput
+          id="name"
+          label="Your name"
+          autoComplete="name"
+          error={errors.name?.message}
+          {...form.register("name")}
+        />
+      )}
       {need !== "nothing" && (
         <TextInput
           id="password"

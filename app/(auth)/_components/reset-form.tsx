@@ -20,7 +20,12 @@ export function AskResetForm() {
   const send = form.handleSubmit(async ({ email }) => {
     const answer = await postAuth("/api/auth/request-password-reset", { email, redirectTo: "/reset" });
     if (answer.ok) setSentTo(email);
-    else form.setError("email", { message: answer.message || "The link could not be sent. Try again." }, { shouldFocus: true });
+    else
+      form.setError(
+        "email",
+        { message: answer.message || "The link could not be sent. Try again." },
+        { shouldFocus: true },
+      );
   });
 
   if (sentTo) {
@@ -39,7 +44,14 @@ export function AskResetForm() {
   return (
     <form className="form" onSubmit={send} noValidate>
       <h1>Set a new password</h1>
-      <TextInput id="email" type="email" label="E-mail" autoComplete="username" error={errors.email?.message} {...form.register("email")} />
+      <TextInput
+        id="email"
+        type="email"
+        label="E-mail"
+        autoComplete="username"
+        error={errors.email?.message}
+        {...form.register("email")}
+      />
       <Button type="submit" busy={isSubmitting} busyLabel="Sending">
         Send me a link
       </Button>
@@ -52,7 +64,9 @@ export function AskResetForm() {
   );
 }
 
-const setSchema = z.object({ password: z.string().min(10, "A password has at least ten characters.").max(128, "That is more than 128 characters.") });
+const setSchema = z.object({
+  password: z.string().min(10, "A password has at least ten characters.").max(128, "That is more than 128 characters."),
+});
 
 export function SetPasswordForm({ token }: { token: string }) {
   const router = useRouter();
@@ -62,7 +76,12 @@ export function SetPasswordForm({ token }: { token: string }) {
   const send = form.handleSubmit(async ({ password }) => {
     const answer = await postAuth("/api/auth/reset-password", { newPassword: password, token });
     if (answer.ok) router.push("/sign-in");
-    else form.setError("password", { message: answer.message || "This link has run out. Ask for a new one." }, { shouldFocus: true });
+    else
+      form.setError(
+        "password",
+        { message: answer.message || "This link has run out. Ask for a new one." },
+        { shouldFocus: true },
+      );
   });
 
   return (

@@ -28,13 +28,24 @@ export function SignInForm({ to }: { to: string }) {
       return;
     }
     const isWrong = answer.message.toLowerCase().includes("invalid email or password");
-    form.setError("password", { message: isWrong ? "That e-mail and password do not go together." : answer.message }, { shouldFocus: true });
+    form.setError(
+      "password",
+      { message: isWrong ? "That e-mail and password do not go together." : answer.message },
+      { shouldFocus: true },
+    );
   });
 
   return (
     <form className="form" onSubmit={send} noValidate>
       <h1>Sign in</h1>
-      <TextInput id="email" type="email" label="E-mail" autoComplete="username" error={errors.email?.message} {...form.register("email")} />
+      <TextInput
+        id="email"
+        type="email"
+        label="E-mail"
+        autoComplete="username"
+        error={errors.email?.message}
+        {...form.register("email")}
+      />
       <TextInput
         id="password"
         type="password"

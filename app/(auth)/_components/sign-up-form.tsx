@@ -10,11 +10,17 @@ import { postAuth } from "./auth-request";
 
 export function SignUpForm() {
   const router = useRouter();
-  const form = useForm<SignUpInput>({ resolver: zodResolver(signUpInput), defaultValues: { shopName: "", name: "", email: "", password: "" } });
+  const form = useForm<SignUpInput>({
+    resolver: zodResolver(signUpInput),
+    defaultValues: { shopName: "", name: "", email: "", password: "" },
+  });
   const { errors, isSubmitting } = form.formState;
 
   const send = form.handleSubmit(async (input) => {
-    const made = await postAuth("/api/sign-up", { ...input, timeZone: Intl.DateTimeFormat().resolvedOptions().timeZone });
+    const made = await postAuth("/api/sign-up", {
+      ...input,
+      timeZone: Intl.DateTimeFormat().resolvedOptions().timeZone,
+    });
     if (!made.ok) {
       const field = (made.pointer?.slice(1) || "email") as keyof SignUpInput;
       form.setError(field, { message: made.message }, { shouldFocus: true });
@@ -28,9 +34,28 @@ export function SignUpForm() {
   return (
     <form className="form" onSubmit={send} noValidate>
       <h1>Open a shop</h1>
-      <TextInput id="shopName" label="Name of the shop" autoComplete="organization" error={errors.shopName?.message} {...form.register("shopName")} />
-      <TextInput id="name" label="Your name" autoComplete="name" error={errors.name?.message} {...form.register("name")} />
-      <TextInput id="email" type="email" label="E-mail" autoComplete="username" error={errors.email?.message} {...form.register("email")} />
+      <TextInput
+        id="shopName"
+        label="Name of the shop"
+        autoComplete="organization"
+        error={errors.shopName?.message}
+        {...form.register("shopName")}
+      />
+      <TextInput
+        id="name"
+        label="Your name"
+        autoComplete="name"
+        error={errors.name?.message}
+        {...form.register("name")}
+      />
+      <TextInput
+        id="email"
+        type="email"
+        label="E-mail"
+        autoComplete="username"
+        error={errors.email?.message}
+        {...form.register("email")}
+      />
       <TextInput
         id="password"
         type="password"

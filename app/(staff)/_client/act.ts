@@ -24,7 +24,14 @@ export const saving = {
 };
 
 const lost = (detail: string): Problem => ({
-  type: "urn:firedeck:problem:offline", title: "No connection", status: 0, detail, instance: "", code: "internal", requestId: "", errors: [],
+  type: "urn:firedeck:problem:offline",
+  title: "No connection",
+  status: 0,
+  detail,
+  instance: "",
+  code: "internal",
+  requestId: "",
+  errors: [],
 });
 
 const TRIES = 3;
@@ -34,7 +41,11 @@ const wait = (ms: number) => new Promise((resolve) => setTimeout(resolve, ms));
  * Does one write. A lost connection is tried again with the same key, so that it happens once however often it is sent;
  * a refusal comes back as problem details for the form to show in place.
  */
-export async function act<T = unknown>(verb: string, input: unknown, key: string = crypto.randomUUID()): Promise<Answer<T>> {
+export async function act<T = unknown>(
+  verb: string,
+  input: unknown,
+  key: string = crypto.randomUUID(),
+): Promise<Answer<T>> {
   running += 1;
   set({ kind: "saving" });
   let answer: Answer<T> = { ok: false, problem: lost("The server can't be reached. What you typed is still here.") };
@@ -47,7 +58,9 @@ export async function act<T = unknown>(verb: string, input: unknown, key: string
         body: JSON.stringify(input),
       });
       const body = await response.json().catch(() => null);
-      answer = response.ok ? { ok: true, data: body as T } : { ok: false, problem: (body as Problem) ?? lost("The server's answer can't be read. Try again.") };
+      answer = response.ok
+        ? { ok: true, data: body as T }
+        : { ok: false, problem: (body as Problem) ?? lost("The server's answer can't be read. Try again.") };
       break;
     } catch {
       // the network failed: the same request goes out again
@@ -66,5 +79,7 @@ export function fieldErrorsOf(problem: Problem): Record<string, string> {
 
 /** The sentence for a failed act; a fault of ours adds the request's number. */
 export function sentenceOf(problem: Problem): string {
-  return problem.code === "internal" && problem.requestId ? `${problem.detail} Request ${problem.requestId.slice(0, 8)}.` : problem.detail;
+  return problem.code === "internal" && problem.requestId
+    ? `${problem.detail} Request ${problem.requestId.slice(0, 8)}.`
+    : problem.detail;
 }

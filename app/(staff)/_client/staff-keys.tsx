@@ -9,6 +9,8 @@ const PARTS = { r: "readings", c: "causes", q: "quote", p: "proof" };
 export function StaffKeys() {
   const router = useRouter();
   const found = /^\/cases\/(\d+)/.exec(usePathname());
-  const parts = found ? Object.fromEntries(Object.entries(PARTS).map(([key, part]) => [key, `/cases/${found[1]}/${part}`])) : undefined;
+  const parts = found
+    ? Object.fromEntries(Object.entries(PARTS).map(([key, part]) => [key, `/cases/${found[1]}/${part}`]))
+    : undefined;
   return <StaffShortcuts go={(href: string) => router.push(href)} parts={parts} />;
 }

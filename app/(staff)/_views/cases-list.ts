@@ -1,7 +1,7 @@
 import type { CaseGroupView, CaseRowView } from "@/components/cases/model";
 import { formatClock, formatSpan, formatWhen, isSameDay } from "@/components/ui/format";
 import type { Ctx } from "@/lib/auth/context";
-import { STAGE_LABELS, type PathStage, type Stage } from "@/lib/cases/stages";
+import { type PathStage, STAGE_LABELS, type Stage } from "@/lib/cases/stages";
 import { CAUSES } from "@/lib/diagnosis/causes";
 import type { CaseList, ListQuery } from "@/lib/services/cases/list";
 
@@ -9,18 +9,27 @@ type Row = CaseList["rows"][number];
 
 const minutesSince = (at: Date, now: Date) => Math.max(0, Math.round((now.getTime() - at.getTime()) / 60_000));
 
-export function promiseView(promisedAt: Date | null, stage: string, now: Date, timeZone: string): CaseRowView["promise"] {
+export function promiseView(
+  promisedAt: Date | null,
+  stage: string,
+  now: Date,
+  timeZone: string,
+): CaseRowView["promise"] {
   if (!promisedAt) return null;
   const isOver = stage === "closed" || stage === "released";
   const iso = promisedAt.toISOString();
   if (!isOver && promisedAt < now) {
-    const when = isSameDay(iso, now.toISOString(), timeZone) ? formatClock(iso, timeZone) : formatWhen(iso, now.toISOString(), timeZone);
+    const when = isSameDay(iso, now.toISOString(), timeZone)
+      ? formatClock(iso, timeZone)
+      : formatWhen(iso, now.toISOString(), timeZone);
     return { words: `Late since ${when}`, isLate: true };
   }
   return { words: formatWhen(iso, now.toISOString(), timeZone), isLate: false };
 }
 
-export function causeView(row: Pick<Row, "leadCause" | "leadFamily" | "leadProbability" | "leadMark">): CaseRowView["cause"] {
+export function causeView(
+  row: Pick<Row, "leadCause" | "leadFamily" | "leadProbability" | "leadMark">,
+): CaseRowView["cause"] {
   if (!row.leadCause) return null;
   const cause = CAUSES[row.leadCause as keyof typeof CAUSES];
   const note = row.leadMark ?? (row.leadProbability === null ? "" : `${Math.round(row.leadProbability * 100)} %`);
@@ -49,7 +58,14 @@ export function caseRowView(row: Row, now: Date, timeZone: string): CaseRowView 
   };
 }
 
-function groupTitle(row: Row, ctx: Ctx, order: ListQuery["order"], show: ListQuery["show"], now: Date, timeZone: string): string {
+function groupTitle(
+  row: Row,
+  ctx: Ctx,
+  order: ListQuery["order"],
+  show: ListQuery["show"],
+  now: Date,
+  timeZone: string,
+): string {
   const first = ctx.actor.name.split(" ")[0] ?? ctx.actor.name;
   if (show === "closed") return "Ended in the last seven days";
   if (order === "technician") return row.technicianName ?? "Not yet given";
@@ -90,6 +106,11 @@ export function caseGroups(list: CaseList, ctx: Ctx, query: ListQuery): CaseGrou
   return groups.map(({ id, title, rows }) => {
     const oldest = Math.max(...rows.map((row) => minutesSince(row.stageSince, ctx.now)));
     const count = `${rows.length} ${rows.length === 1 ? "case" : "cases"}`;
-    return { id, title, note: rows.length > 1 ? `${count}, oldest ${formatSpan(oldest)}` : count, rows: rows.map((row) => caseRowView(row, ctx.now, timeZone)) };
+    return {
+      id,
+      title,
+      note: rows.length > 1 ? `${count}, oldest ${formatSpan(oldest)}` : count,
+      rows: rows.map((row) => caseRowView(row, ctx.now, timeZone)),
+    };
   });
 }

@@ -1,9 +1,9 @@
 import { cookies } from "next/headers";
 import { SignOutButton } from "@/components/people/sign-out";
 import { TopBar } from "@/components/ui/top-bar";
+import type { Ctx } from "@/lib/auth/context";
 import { mayDo } from "@/lib/auth/permissions";
 import { ROLE_WORDS } from "@/lib/auth/role-words";
-import type { Ctx } from "@/lib/auth/context";
 import { LiveSaveState } from "../_client/live-save-state";
 
 export type NavPart = "cases" | "customers" | "vehicles" | "prices" | "reports" | "audit" | "settings";
@@ -26,7 +26,9 @@ export function navFor(ctx: Ctx, current: NavPart) {
     ["audit", "Audit", mayDo(ctx.actor.role, "audit.read")],
     ["settings", "Settings", mayDo(ctx.actor.role, "settings.edit")],
   ];
-  return parts.filter(([, , isShown]) => isShown).map(([part, label]) => ({ href: `/${part}`, label, current: part === current }));
+  return parts
+    .filter(([, , isShown]) => isShown)
+    .map(([part, label]) => ({ href: `/${part}`, label, current: part === current }));
 }
 
 export async function StaffTop({ ctx, shop, current, findText }: StaffTopProps) {

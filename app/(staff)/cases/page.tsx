@@ -14,7 +14,8 @@ const SHOWS = ["mine", "all", "parked", "closed"] as const;
 const ORDERS = ["waiting", "technician", "promise"] as const;
 
 const one = (value: string | string[] | undefined) => (Array.isArray(value) ? value[0] : value) ?? "";
-const pick = <T extends string>(value: string, allowed: readonly T[], fallback: T) => (allowed.includes(value as T) ? (value as T) : fallback);
+const pick = <T extends string>(value: string, allowed: readonly T[], fallback: T) =>
+  allowed.includes(value as T) ? (value as T) : fallback;
 
 function address(query: ListQuery, change: Partial<ListQuery>): string {
   const next = { ...query, after: null, ...change };
@@ -42,8 +43,18 @@ export default async function CasesPage({ searchParams }: { searchParams: Promis
     list = await listCases(ctx, query);
   }
   const { counts, settings } = list;
-  const title = query.query ? `${list.rows.length}${list.next ? " and more" : ""} found` : counts.all === 0 ? "No case is open" : `${counts.all} ${counts.all === 1 ? "case" : "cases"} open,`;
-  const note = query.query ? `for “${query.query}”` : counts.all === 0 ? undefined : counts.mine === 0 ? "none of them waits on you" : `${counts.mine} of them ${counts.mine === 1 ? "is" : "are"} yours`;
+  const title = query.query
+    ? `${list.rows.length}${list.next ? " and more" : ""} found`
+    : counts.all === 0
+      ? "No case is open"
+      : `${counts.all} ${counts.all === 1 ? "case" : "cases"} open,`;
+  const note = query.query
+    ? `for “${query.query}”`
+    : counts.all === 0
+      ? undefined
+      : counts.mine === 0
+        ? "none of them waits on you"
+        : `${counts.mine} of them ${counts.mine === 1 ? "is" : "are"} yours`;
   return (
     <>
       <StaffTop ctx={ctx} shop={list.shopName} current="cases" findText={query.query} />
@@ -69,23 +80,55 @@ export default async function CasesPage({ searchParams }: { searchParams: Promis
               }
         }
         filters={[
-          { label: "Mine", href: address(query, { show: "mine", query: "" }), count: counts.mine, current: !query.query && query.show === "mine" },
-          { label: "Everyone’s", href: address(query, { show: "all", query: "" }), count: counts.all, current: !query.query && query.show === "all" },
-          { label: "On hold", href: address(query, { show: "parked", query: "" }), count: counts.parked, current: !query.query && query.show === "parked" },
-          { label: "Closed this week", href: address(query, { show: "closed", query: "" }), count: counts.closed, current: !query.query && query.show === "closed" },
+          {
+            label: "Mine",
+            href: address(query, { show: "mine", query: "" }),
+            count: counts.mine,
+            current: !query.query && query.show === "mine",
+          },
+          {
+            label: "Everyone’s",
+            href: address(query, { show: "all", query: "" }),
+            count: counts.all,
+            current: !query.query && query.show === "all",
+          },
+          {
+            label: "On hold",
+            href: address(query, { show: "parked", query: "" }),
+            count: counts.parked,
+            current: !query.query && query.show === "parked",
+          },
+          {
+            label: "Closed this week",
+            href: address(query, { show: "closed", query: "" }),
+            count: counts.closed,
+            current: !query.query && query.show === "closed",
+          },
         ]}
         orders={
           query.query || query.show === "closed"
             ? undefined
             : [
                 { label: "waiting on", href: address(query, { order: "waiting" }), current: query.order === "waiting" },
-                { label: "technician", href: address(query, { order: "technician" }), current: query.order === "technician" },
+                {
+                  label: "technician",
+                  href: address(query, { order: "technician" }),
+                  current: query.order === "technician",
+                },
                 { label: "promise", href: address(query, { order: "promise" }), current: query.order === "promise" },
               ]
         }
         groups={caseGroups(list, ctx, query)}
         more={list.next ? { label: "Show 50 more", href: address(query, { after: list.next }) } : undefined}
-        empty={query.query ? <NothingFound query={query.query} close={[]} hint="A number, a name, a plate, a VIN or a code: any part of it finds the case." /> : undefined}
+        empty={
+          query.query ? (
+            <NothingFound
+              query={query.query}
+              close={[]}
+              hint="A number, a name, a plate, a VIN or a code: any part of it finds the case."
+            />
+          ) : undefined
+        }
       />
     </>
   );

@@ -1,5 +1,5 @@
-import { route } from "@/lib/http/route";
 import { authorize } from "@/lib/auth/context";
+import { route } from "@/lib/http/route";
 import { onChange } from "@/lib/realtime/changes";
 
 const BEAT_MS = 25_000;
@@ -35,5 +35,11 @@ export const GET = route(async ({ ctx, request, url }) => {
       });
     },
   });
-  return new Response(body, { headers: { "content-type": "text/event-stream", "cache-control": "no-cache, no-transform", "x-accel-buffering": "no" } });
+  return new Response(body, {
+    headers: {
+      "content-type": "text/event-stream",
+      "cache-control": "no-cache, no-transform",
+      "x-accel-buffering": "no",
+    },
+  });
 });

@@ -1,5 +1,5 @@
-import { assertOrigin, guarded, ok, readJson } from "@/lib/http/route";
 import { limitRate } from "@/lib/http/rate-limit";
+import { assertOrigin, guarded, ok, readJson } from "@/lib/http/route";
 import { openShop } from "@/lib/services/shops/open-shop";
 
 /** Open to visitors: makes an account and its shop. */

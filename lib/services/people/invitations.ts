@@ -19,8 +19,13 @@ export interface InvitationView {
 export async function readInvitation(id: string, now = new Date()): Promise<InvitationView | null> {
   const [row] = await authDb()
     .select({
-      id: invitation.id, email: invitation.email, role: invitation.role, status: invitation.status, expiresAt: invitation.expiresAt,
-      shopName: organization.name, inviterName: user.name,
+      id: invitation.id,
+      email: invitation.email,
+      role: invitation.role,
+      status: invitation.status,
+      expiresAt: invitation.expiresAt,
+      shopName: organization.name,
+      inviterName: user.name,
     })
     .from(invitation)
     .innerJoin(organization, eq(organization.id, invitation.organizationId))
@@ -29,13 +34,27 @@ export async function readInvitation(id: string, now = new Date()): Promise<Invi
   if (!row) return null;
   const [account] = await authDb().select({ id: user.id }).from(user).where(eq(user.email, row.email.toLowerCase()));
   const state = row.status !== "pending" ? "over" : row.expiresAt < now ? "expired" : "pending";
-  return { id: row.id, email: row.email, role: row.role ?? "technician", shopName: row.shopName, inviterName: row.inviterName, state, hasAccount: Boolean(account) };
+  return {
+    id: row.id,
+    email: row.email,
+    role: row.role ?? "technician",
+    shopName: row.shopName,
+    inviterName: row.inviterName,
+    state,
+    hasAccount: Boolean(account),
+  };
 }
 
 export async function listInvitations(ctx: Ctx) {
   authorize(ctx, "people.manage");
   return authDb()
-    .select({ id: invitation.id, email: invitation.email, role: invitation.role, status: invitation.status, expiresAt: invitation.expiresAt })
+    .select({
+      id: invitation.id,
+      email: invitation.email,
+      role: invitation.role,
+      status: invitation.status,
+      expiresAt: invitation.expiresAt,
+    })
     .from(invitation)
     .where(and(eq(invitation.organizationId, ctx.shopId), eq(invitation.status, "pending")))
     .orderBy(asc(invitation.createdAt));

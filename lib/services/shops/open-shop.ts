@@ -16,10 +16,17 @@ export interface OpenedShop {
 }
 
 /** Signing up makes a person and their shop, with a general and a diagnosis rate to start from. */
-export async function openShop(raw: z.input<typeof signUpInput>, facts: Pick<Ctx, "requestId">, now = new Date()): Promise<OpenedShop> {
+export async function openShop(
+  raw: z.input<typeof signUpInput>,
+  facts: Pick<Ctx, "requestId">,
+  now = new Date(),
+): Promise<OpenedShop> {
   const input = signUpInput.parse(raw);
   const user = await makeUser(input);
-  const slug = `${input.shopName.toLowerCase().replaceAll(/[^a-z0-9]+/g, "-").slice(0, 40)}-${newId("s").slice(-6)}`;
+  const slug = `${input.shopName
+    .toLowerCase()
+    .replaceAll(/[^a-z0-9]+/g, "-")
+    .slice(0, 40)}-${newId("s").slice(-6)}`;
   const shop = await auth().api.createOrganization({ body: { name: input.shopName, slug, userId: user.id } });
   if (!shop) throw new AppError("internal", "The shop could not be made. Try again.");
   const ctx: Ctx = { shopId: asShopId(shop.id), actor: { id: user.id, name: user.name, role: "owner" }, now, ...facts };
@@ -40,16 +47,24 @@ export async function openShop(raw: z.input<typeof signUpInput>, facts: Pick<Ctx
   return { shopId: shop.id, userId: user.id };
 }
 
-async function makeUser({ email, password, name }: z.output<typeof signUpInput>): Promise<{ id: string; name: string }> {
+async function makeUser({
+  email,
+  password,
+  name,
+}: z.output<typeof signUpInput>): Promise<{ id: string; name: string }> {
   try {
     const { user } = await auth().api.signUpEmail({ body: { email, password, name } });
     return user;
   } catch (error) {
     const code = (error as { body?: { code?: string } }).body?.code ?? "";
     if (code.startsWith("USER_ALREADY_EXISTS")) {
-      throw new AppError("conflict", "There is an account with that e-mail already. Sign in, or ask for a link to set a new password.", {
-        fields: [{ pointer: "/email", detail: "There is an account with that e-mail already." }],
-      });
+      throw new AppError(
+        "conflict",
+        "There is an account with that e-mail already. Sign in, or ask for a link to set a new password.",
+        {
+          fields: [{ pointer: "/email", detail: "There is an account with that e-mail already." }],
+        },
+      );
     }
     throw error;
   }

@@ -10,7 +10,8 @@ export const POST = route<{ verb: string }>(async ({ request, ctx, params, json 
   const key = request.headers.get("idempotency-key")?.slice(0, 100) || undefined;
   const ifMatch = request.headers.get("if-match")?.replaceAll('"', "");
   const body = (await json()) as Record<string, unknown>;
-  const input = ifMatch && /^\d+$/.test(ifMatch) && body.version === undefined ? { ...body, version: Number(ifMatch) } : body;
+  const input =
+    ifMatch && /^\d+$/.test(ifMatch) && body.version === undefined ? { ...body, version: Number(ifMatch) } : body;
   const value = await perform(verb, ctx, input, { idempotencyKey: key });
   const version = (value as { version?: number } | null)?.version;
   return ok(value, version === undefined ? {} : { headers: { etag: `"${version}"` } });

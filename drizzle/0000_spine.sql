@@ -182,6 +182,7 @@ CREATE TABLE "cases" (
 	"rates" jsonb,
 	"site" jsonb NOT NULL,
 	"readiness" jsonb NOT NULL,
+	"after_codes_read" boolean DEFAULT false NOT NULL,
 	"lead_cause" text,
 	"lead_family" text,
 	"lead_probability" real,

@@ -50,6 +50,8 @@ export const cases = pgTable(
     rates: jsonb("rates").$type<Record<string, number>>(),
     site: jsonb("site").$type<{ baroKPa?: number; ambientC?: number }>().notNull(),
     readiness: jsonb("readiness").$type<Record<string, string>>().notNull(),
+    /** The codes were read after the repair, even if none was found. */
+    afterCodesRead: boolean("after_codes_read").notNull().default(false),
     leadCause: text("lead_cause"),
     leadFamily: text("lead_family"),
     leadProbability: real("lead_probability"),

@@ -171,6 +171,7 @@ export const codeInput = caseRef.extend({
 export const removeCodeInput = z.object({ caseId: idText, codeId: idText });
 export const readinessInput = caseRef.extend({
   readiness: z.record(z.string().max(40), z.enum(["complete", "incomplete", "unsupported"])),
+  afterCodesRead: z.boolean().optional(),
 });
 export const importReadingsInput = caseRef.extend({ file: z.unknown() });
 

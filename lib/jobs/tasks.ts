@@ -7,7 +7,7 @@ import { asShopId, type Ctx } from "@/lib/auth/context";
 import { sendMail } from "@/lib/mail/mailer";
 import { processFile } from "@/lib/services/files/files";
 import { perform } from "@/lib/services/verb";
-import { makePhoto, PhotoError } from "@/lib/storage/photos";
+import { processImage } from "@/lib/storage/images";
 import { sniff } from "@/lib/storage/sniff";
 import { storage } from "@/lib/storage/storage";
 
@@ -54,7 +54,7 @@ export async function sendMailTask({ shopId, mailId }: { shopId: string; mailId:
         text: mail.text,
         html: mail.html,
         attachments,
-        messageId: `${mail.id}@firedeck`,
+        once: mail.id,
       });
       await tx.update(mails).set({ sentAt: new Date(), lastError: null }).where(here);
     },
@@ -103,31 +103,19 @@ export async function processFileTask(
   const sha256 = createHash("sha256").update(bytes).digest("hex");
   const kind = sniff(bytes);
   if (file.kind !== "photo") {
-    const fits = file.kind === "document" ? kind === "pdf" : kind === "text";
-    await perform(processFile, ctx, {
-      fileId,
-      sha256,
-      state: fits ? "ready" : "refused",
-      reason: fits ? null : "By its content this is not that kind of file.",
-    });
+    const fits = file.kind === "document" ? kind === "application/pdf" : kind === "text/plain";
+    const reason = fits ? null : "By its content this is not that kind of file.";
+    await perform(processFile, ctx, { fileId, sha256, state: fits ? "ready" : "refused", reason });
     return;
   }
-  try {
-    const photo = await makePhoto(bytes);
-    const displayKey = await store.put(photo.display, `${fileId}.webp`, "image/webp");
-    const thumbKey = await store.put(photo.thumb, `${fileId}-small.webp`, "image/webp");
-    await perform(processFile, ctx, {
-      fileId,
-      sha256,
-      state: "ready",
-      contentType: "image/webp",
-      displayKey,
-      thumbKey,
-      width: photo.width,
-      height: photo.height,
-    });
-  } catch (error) {
-    if (!(error instanceof PhotoError)) throw error;
-    await perform(processFile, ctx, { fileId, sha256, state: "refused", reason: error.message });
+  const result = await processImage(bytes);
+  if (!result.ok) {
+    await perform(processFile, ctx, { fileId, sha256, state: "refused", reason: result.reason });
+    return;
   }
+  const { display, thumbnail, width, height } = result.image;
+  const contentType = "image/webp";
+  const displayKey = await store.put(display, { name: `${fileId}.webp`, contentType });
+  const thumbKey = await store.put(thumbnail, { name: `${fileId}-small.webp`, contentType });
+  await perform(processFile, ctx, { fileId, sha256, state: "ready", contentType, displayKey, thumbKey, width, height });
 }

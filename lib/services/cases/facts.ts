@@ -3,6 +3,7 @@ import type { CaseParts } from "@/db/queries/cases";
 import type { CaseFacts, ParkReason, PathStage, Stage } from "@/lib/cases/stages";
 import { type CaseFile, parseCaseFile } from "@/lib/diagnosis/case-file";
 import { judgeProof, type ProofResult } from "@/lib/diagnosis/proof";
+import type { CauseId, CodeStatus, ReadinessState, TestId } from "@/lib/diagnosis/vocabulary";
 import { shopSettings } from "@/lib/shops/schema";
 
 /** The case file of `lib/diagnosis` as it stands in the database; what does not fit is left out rather than lost: it stays in its row. */
@@ -43,17 +44,19 @@ export function caseFileOf(parts: CaseParts): CaseFile {
 
 export function proofOf(parts: CaseParts, caseFile = caseFileOf(parts)): ProofResult {
   const after = parts.tests.filter((test) => test.phase === "after");
+  const afterCodes = parts.codes.filter((code) => code.phase === "after");
+  const wasRead = parts.row.afterCodesRead || afterCodes.length > 0;
   return judgeProof({
     caseFile,
-    provenCauses: parts.marks.map((mark) => mark.causeId as never),
+    provenCauses: parts.marks.map((mark) => mark.causeId as CauseId),
     tests: [
-      ...caseFile.tests.map((test) => ({ ...test, phase: "before" as const })),
-      ...after.map((test) => ({ id: test.testId as never, outcome: test.outcome, phase: "after" as const })),
+      ...(caseFile.tests ?? []),
+      ...after.map((test) => ({ id: test.testId as TestId, outcome: test.outcome, phase: "after" as const })),
     ],
-    afterCodes: parts.codes
-      .filter((code) => code.phase === "after")
-      .map((code) => ({ code: code.code, status: code.status as never })),
-    readiness: parts.row.readiness as never,
+    afterCodes: wasRead
+      ? afterCodes.map((code) => ({ code: code.code, status: code.status as CodeStatus }))
+      : undefined,
+    readiness: parts.row.readiness as Record<string, ReadinessState>,
   });
 }
 

@@ -52,9 +52,9 @@ export const setReadiness = defineVerb({
   summary: "Record which self-tests of the control unit have run",
   action: "reading.write",
   input: readinessInput,
-  async run(tx, ctx, { caseId, readiness }) {
+  async run(tx, ctx, { caseId, readiness, afterCodesRead }) {
     await lockOpenCase(tx, ctx, caseId);
-    await setCase(tx, ctx, caseId, { readiness });
+    await setCase(tx, ctx, caseId, { readiness, ...(afterCodesRead === undefined ? {} : { afterCodesRead }) });
     await refreshCase(tx, ctx, caseId);
     return { saved: true };
   },

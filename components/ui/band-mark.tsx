@@ -13,6 +13,8 @@ export interface BandMarkProps {
   /** Decimals and sign for the spoken band. */
   decimals?: number;
   unit?: string;
+  /** Outside, but not to be flagged (watched): the tick stands where it is, without colour. */
+  isQuiet?: boolean;
   className?: string;
 }
 
@@ -21,7 +23,16 @@ export interface BandMarkProps {
  * unit. Inside: a tick. Outside: a bar from the band's edge to the family's shape, which stays at the edge when the
  * reading runs off the scale. A band with one end only is mirrored about it.
  */
-export function BandMark({ value, band, family, size = "counter", decimals = 2, unit, className }: BandMarkProps) {
+export function BandMark({
+  value,
+  band,
+  family,
+  size = "counter",
+  decimals = 2,
+  unit,
+  isQuiet,
+  className,
+}: BandMarkProps) {
   const [width, height] = SIZES[size];
   const k = 1 + (height - 14) / 16;
   const pad = 4 * k;
@@ -43,7 +54,7 @@ export function BandMark({ value, band, family, size = "counter", decimals = 2, 
     >
       <path className="base" d={`M0 ${middle}H${width}`} />
       <rect className="band" x={scale.left} y={middle - 2.5 * k} width={scale.right - scale.left} height={5 * k} />
-      {side === 0 ? (
+      {side === 0 || isQuiet ? (
         <rect className="at" x={x - k} y={middle - 5.5 * k} width={2 * k} height={11 * k} />
       ) : (
         <g className={fam}>

@@ -26,8 +26,8 @@ export function BayBar({ home = "/cases", strip, stateWords, mini, parts, save, 
   const shown = parts.filter((part) => IN_BAR.includes(part.label));
   const rest = parts.filter((part) => !IN_BAR.includes(part.label));
   return (
-    <>
-      <header className="baytop">
+    <header>
+      <div className="baytop">
         <Link href={home} className="bk" aria-label="All cases">
           <Mark />
         </Link>
@@ -61,13 +61,13 @@ export function BayBar({ home = "/cases", strip, stateWords, mini, parts, save, 
           </details>
         </nav>
         {save}
-      </header>
+      </div>
       <div className="baysaid">
         <span className="said" title={strip.complaint}>
           {strip.complaint}
         </span>
         {agreed && <span className="faint">{agreed}</span>}
       </div>
-    </>
+    </header>
   );
 }

@@ -46,6 +46,7 @@ export function PromiseLine({ promises, now, timeZone, opens, closes }: PromiseL
       : `Promises today: ${promises.length}, ${late.length === 0 ? "none late" : `late: ${late.map((p) => p.number).join(", ")}`}`;
   return (
     <div className="dayline" ref={ref}>
+      {/* biome-ignore lint/a11y/useSemanticElements: a drawing that holds links; no HTML element groups inside SVG */}
       <svg className="chart" width={width} height="62" viewBox={`0 0 ${width} 62`} role="group" aria-label={spoken}>
         {start > 10 && (
           <text x="0" y="44" className="t">

@@ -73,7 +73,7 @@ export const sendQuote = defineVerb({
     });
     const link = await makeLink(tx, ctx, { caseId, kind: "quote", targetId: id, sentTo: address ?? null, expiresAt });
     const url = `${env().APP_URL}/q/${link.secret}`;
-    const bytes = await renderQuote(quotePaperModel(snapshot, sha256, ctx.now));
+    const bytes = await renderQuote(quotePaperModel(snapshot, sha256, ctx.now, settings.paper));
     await tx.insert(papers).values({
       shopId: ctx.shopId,
       id: newId("pap", ctx.now.getTime()),

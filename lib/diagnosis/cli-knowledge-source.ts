@@ -18,7 +18,9 @@ export function trimTableSource(): string {
     for (const behaviour of TRIM_BEHAVIOURS) {
       lines.push(`    "${behaviour}": [`);
       for (const row of table[metering][behaviour])
-        lines.push(`      { share: ${row.share}, scope: "${row.scope}", trimPct: [${row.trimPct.map((t) => (Object.is(t, -0) ? 0 : t)).join(", ")}] },`);
+        lines.push(
+          `      { share: ${row.share}, scope: "${row.scope}", trimPct: [${row.trimPct.map((t) => (Object.is(t, -0) ? 0 : t)).join(", ")}] },`,
+        );
       lines.push("    ],");
     }
     lines.push("  },");

@@ -54,6 +54,7 @@ export const phiFromLambda = (lambda: number) => 1 / lambda;
 export const extraFuelPct = (lambda: number) => 100 * (1 / lambda - 1);
 
 /** Percent more (+) or less fuel that short and long trim make together, exactly: they multiply. */
-export const trimProduct = (shortPct: number, longPct: number) => 100 * ((1 + shortPct / 100) * (1 + longPct / 100) - 1);
+export const trimProduct = (shortPct: number, longPct: number) =>
+  100 * ((1 + shortPct / 100) * (1 + longPct / 100) - 1);
 /** The trade's sum of short and long trim. */
 export const trimSum = (shortPct: number, longPct: number) => shortPct + longPct;

@@ -93,7 +93,12 @@ export function leakFlowGps(areaMm2: number, mapKPa: number, baroKPa = BARO_KPA,
 const bankOf = (cylinder: number, engine: Engine) => (engine.banks === 2 && cylinder > engine.cylinders / 2 ? 1 : 0);
 
 /** Solves one operating point. `scope`: a sensor bias touches bank 1 alone or both. */
-export function solvePoint(engine: Engine, point: OperatingPoint, fault: Fault, scope: "one" | "both" = "both"): PointResult {
+export function solvePoint(
+  engine: Engine,
+  point: OperatingPoint,
+  fault: Fault,
+  scope: "one" | "both" = "both",
+): PointResult {
   const at = OPERATING_POINTS.indexOf(point);
   const { rpm, mapKPa, ve } = POINTS[point];
   const n = engine.cylinders;
@@ -112,8 +117,8 @@ export function solvePoint(engine: Engine, point: OperatingPoint, fault: Fault, 
 
   const nominalRatio = stoichiometricRatio(engine.ethanol);
   const tank = fault.tankEthanol ?? engine.ethanol;
-  const tankRatio = stoichiometricRatio(tank);
-  // Injectors meter volume: what counts is air per volume of the fuel that is in the tank.
+  // Injectors meter volume. Fuel is counted here in what the nominal blend would burn with: a volume of a blend that
+  // needs more volume for the same air counts for less.
   const dose = volumeDemand(engine.ethanol) / volumeDemand(tank);
 
   const air = Array.from({ length: n }, (_, i) => {
@@ -123,7 +128,7 @@ export function solvePoint(engine: Engine, point: OperatingPoint, fault: Fault, 
   });
   const fuel = Array.from({ length: n }, (_, i) => {
     const factor = fault.injectorFactor !== undefined && (fault.allInjectors || i === 0) ? fault.injectorFactor : 1;
-    return (measured / n / nominalRatio) * factor * Math.sqrt(fault.pressureRatio?.[at] ?? 1) * dose * (nominalRatio / tankRatio);
+    return (measured / n / nominalRatio) * factor * Math.sqrt(fault.pressureRatio?.[at] ?? 1) * dose;
   });
   const extra = (fault.extraFuelGps ?? 0) / n;
 
@@ -140,7 +145,9 @@ export function solvePoint(engine: Engine, point: OperatingPoint, fault: Fault, 
     trims[bank] = (100 * (wanted - extra * mine.length)) / sum(fuel) - 100;
   }
   if (engine.banks === 1) trims[1] = trims[0];
-  const lambda = air.map((a, i) => a / (nominalRatio * ((fuel[i] ?? 0) * (1 + trims[bankOf(i + 1, engine)] / 100) + extra)));
+  const lambda = air.map(
+    (a, i) => a / (nominalRatio * ((fuel[i] ?? 0) * (1 + trims[bankOf(i + 1, engine)] / 100) + extra)),
+  );
   return { trimPct: trims, lambda, airGps: total, speedRatio: total / sound };
 }
 

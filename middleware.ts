@@ -10,12 +10,14 @@ export const config = {
 const OPEN = [/^\/sign-in/, /^\/sign-up/, /^\/reset/, /^\/invitation\//, /^\/q\//, /^\/i\//, /^\/api\//];
 
 function policy(nonce: string): string {
-  const files = process.env.UPLOADTHING_INGEST_URL ? ` ${new URL(process.env.UPLOADTHING_INGEST_URL).origin}` : " https://*.uploadthing.com https://*.ufs.sh";
-  const dev = process.env.NODE_ENV === "development" ? " 'unsafe-eval'" : "";
+  const files = process.env.UPLOADTHING_INGEST_URL
+    ? ` ${new URL(process.env.UPLOADTHING_INGEST_URL).origin}`
+    : " https://*.uploadthing.com https://*.ufs.sh";
+  const isDev = process.env.NODE_ENV === "development";
   return [
     "default-src 'self'",
-    `script-src 'self' 'nonce-${nonce}' 'strict-dynamic'${dev}`,
-    `style-src 'self' 'nonce-${nonce}'${process.env.NODE_ENV === "development" ? " 'unsafe-inline'" : ""}`,
+    `script-src 'self' 'nonce-${nonce}' 'strict-dynamic'${isDev ? " 'unsafe-eval'" : ""}`,
+    isDev ? "style-src 'self' 'unsafe-inline'" : `style-src 'self' 'nonce-${nonce}'`,
     `img-src 'self' blob: data:${files}`,
     "font-src 'self'",
     `connect-src 'self'${files}`,

@@ -1,5 +1,5 @@
 import "server-only";
-import { and, eq, isNull } from "drizzle-orm";
+import { and, eq, isNull, lte } from "drizzle-orm";
 import { clockEntries } from "@/db/schema";
 import { clockOffInput, clockOnInput, correctClockInput } from "@/lib/cases/work-schema";
 import { AppError, invalidField, notFound } from "@/lib/errors";
@@ -29,8 +29,14 @@ export const clockOn = defineVerb({
     await tx
       .update(clockEntries)
       .set({ endedAt: ctx.now })
+      // an entry that starts later than this one cannot end here
       .where(
-        and(eq(clockEntries.shopId, ctx.shopId), eq(clockEntries.personId, ctx.actor.id), isNull(clockEntries.endedAt)),
+        and(
+          eq(clockEntries.shopId, ctx.shopId),
+          eq(clockEntries.personId, ctx.actor.id),
+          isNull(clockEntries.endedAt),
+          lte(clockEntries.startedAt, ctx.now),
+        ),
       );
     const id = newId("clk", ctx.now.getTime());
     await tx.insert(clockEntries).values({

@@ -1,79 +1,111 @@
 import { Text, View } from "@react-pdf/renderer";
+import type { ReactElement } from "react";
 import type { Writing } from "./frame";
 import { look, px } from "./look";
-import { Readings } from "./marks";
+import { readingRows } from "./marks";
 import type { Authorization, InvoiceModel, NotDone } from "./models";
 
-export function Authorizations({
-  list,
-  partsReturned,
-  words,
-  formats,
-}: { list: Authorization[]; partsReturned: string } & Writing) {
+/** The record of who agreed to what, how and when: one element an entry. */
+export function authorizationRows(
+  list: Authorization[],
+  partsReturned: string,
+  { words, formats }: Writing,
+): ReactElement[] {
+  const entry = { marginBottom: px(5) };
+  const rows = list.map((each) => {
+    const contact = each.contact ? ` (${each.contact})` : "";
+    const said = each.words ? ` “${each.words}”` : "";
+    const taken = each.takenBy && each.takenBy !== "link" ? `, ${words.takenBy} ${each.takenBy}` : "";
+    const text = `${each.what} ${formats.money(each.amountMinor)}, ${words.withTax}, ${words.under} ${each.givenBy}, ${each.how}${contact}, ${formats.instant(each.at)}${taken}.${said}`;
+    return (
+      <Text key={each.at + each.what} style={entry}>
+        {text}
+      </Text>
+    );
+  });
+  if (!partsReturned) return rows;
+  return [
+    ...rows,
+    <Text key="parts" style={entry}>
+      {partsReturned}
+    </Text>,
+  ];
+}
+
+/** A section whose rule and heading never part from the first of its rows. */
+export function Section({
+  heading,
+  aside,
+  rows,
+  strength = 2,
+}: {
+  heading?: string;
+  aside?: string;
+  rows: ReactElement[];
+  strength?: 1 | 2;
+}) {
+  const [first, ...rest] = rows;
   return (
     <>
-      <Text style={look.h2}>{words.agreedTo}</Text>
-      {list.map((each) => {
-        const contact = each.contact ? ` (${each.contact})` : "";
-        const said = each.words ? ` “${each.words}”` : "";
-        const taken = each.takenBy && each.takenBy !== "link" ? `, ${words.takenBy} ${each.takenBy}` : "";
-        const text = `${each.what} ${formats.money(each.amountMinor)}, ${words.withTax}, ${words.under} ${each.givenBy}, ${each.how}${contact}, ${formats.instant(each.at)}${taken}.${said}`;
-        return (
-          <Text key={each.at + each.what} style={{ marginBottom: px(5) }}>
-            {text}
-          </Text>
-        );
-      })}
-      {partsReturned ? <Text style={{ marginBottom: px(5) }}>{partsReturned}</Text> : null}
+      <View style={{ ...look.section, borderTopWidth: px(strength) }} wrap={false}>
+        {heading ? (
+          <View style={{ ...look.spread, marginBottom: px(aside ? 6 : 0) }}>
+            <Text style={{ ...look.h2, flexShrink: 1, paddingRight: px(12) }}>{heading}</Text>
+            {aside ? <Text style={look.small}>{aside}</Text> : null}
+          </View>
+        ) : null}
+        {first}
+      </View>
+      {rest}
     </>
   );
 }
 
 export function NotDoneList({ list, words }: { list: NotDone[]; words: Writing["words"] }) {
   if (list.length === 0) return null;
-  return (
-    <View style={look.section}>
-      <Text style={look.h2} minPresenceAhead={px(40)}>
-        {words.notDone}
-      </Text>
-      {list.map((each) => (
-        <View key={each.title} style={{ marginBottom: px(5) }} wrap={false}>
-          <Text>
-            <Text style={look.strong}>{each.title}</Text>
-            {each.why ? `. ${each.why}` : ""}
-          </Text>
-        </View>
-      ))}
-    </View>
-  );
+  const rows = list.map((each) => (
+    <Text key={each.title} style={{ marginBottom: px(5) }}>
+      <Text style={look.strong}>{each.title}</Text>
+      {each.why ? `. ${each.why}` : ""}
+    </Text>
+  ));
+  return <Section heading={words.notDone} rows={rows} />;
 }
 
 export function Proof({ paper, words }: { paper: InvoiceModel; words: Writing["words"] }) {
   if (paper.readings.length === 0 && !paper.proof) return null;
   const hasAfter = paper.readings.some((row) => row.after);
-  return (
-    <View style={look.section}>
-      <View style={{ ...look.spread, marginBottom: px(6) }} minPresenceAhead={px(70)}>
-        <Text style={look.h2}>{hasAfter ? words.measured : words.found}</Text>
-        {paper.readings.length > 0 && <Text style={look.small}>{hasAfter ? words.legend : words.legendOne}</Text>}
-      </View>
-      <Readings rows={paper.readings} words={words} single={!hasAfter} />
-      {paper.proof ? <Text style={{ paddingTop: px(8), paddingRight: px(110) }}>{paper.proof}</Text> : null}
-    </View>
-  );
+  const aside = paper.readings.length === 0 ? undefined : hasAfter ? words.legend : words.legendOne;
+  const rows = [
+    ...readingRows(paper.readings, words, !hasAfter),
+    ...(paper.proof
+      ? [
+          <Text key="proof" style={{ paddingTop: px(8), paddingRight: px(110) }}>
+            {paper.proof}
+          </Text>,
+        ]
+      : []),
+  ];
+  return <Section heading={hasAfter || paper.proof ? words.measured : words.found} aside={aside} rows={rows} />;
 }
 
 export function Terms({ warranty, legal, words }: { warranty: string; legal: string; words: Writing["words"] }) {
-  if (!warranty && !legal) return null;
-  return (
-    <View style={{ ...look.section, borderTopWidth: px(1) }}>
-      {warranty ? (
-        <Text style={look.small}>
-          <Text style={look.strong}>{`${words.warranty}. `}</Text>
-          {warranty}
-        </Text>
-      ) : null}
-      {legal ? <Text style={{ ...look.small, marginTop: px(4) }}>{legal}</Text> : null}
-    </View>
-  );
+  const rows = [
+    ...(warranty
+      ? [
+          <Text key="warranty" style={look.small}>
+            <Text style={look.strong}>{`${words.warranty}. `}</Text>
+            {warranty}
+          </Text>,
+        ]
+      : []),
+    ...(legal
+      ? [
+          <Text key="legal" style={{ ...look.small, marginTop: px(4) }}>
+            {legal}
+          </Text>,
+        ]
+      : []),
+  ];
+  return rows.length > 0 ? <Section rows={rows} strength={1} /> : null;
 }

@@ -34,7 +34,7 @@ export function registerFonts(): void {
       Font.register({
         family: family + suffix,
         fonts: fonts.map(({ file, fontWeight }) => ({
-          src: join(process.cwd(), FOLDER, `${file}${ending}.woff`),
+          src: join(process.cwd(), FOLDER, `${file}${ending}.ttf`),
           fontWeight,
         })),
       });

@@ -32,11 +32,12 @@ export function Frame({ paper, title, words, formats, children }: FrameProps) {
       creationDate={issued}
       modificationDate={issued}
     >
-      <Page size={paper.paper === "A4" ? "A4" : "LETTER"} style={look.page}>
+      <Page experimentalPagination size={paper.paper === "A4" ? "A4" : "LETTER"} style={look.page}>
+        {/* first, since what repeats is taken over to the pages after the one it stands on */}
+        <Foot paper={paper} name={name} words={words} />
         <Head paper={paper} title={title} />
         <Facts paper={paper} words={words} formats={formats} />
         {children}
-        <Foot paper={paper} name={name} words={words} />
       </Page>
     </Document>
   );
@@ -51,7 +52,7 @@ function Head({ paper, title }: { paper: PaperBase; title: string }) {
         <Text style={look.shopName}>{shop.name}</Text>
         <Text style={look.small}>{[shop.address, contact].filter(Boolean).join("\n")}</Text>
       </View>
-      <View style={{ maxWidth: px(240) }}>
+      <View style={look.titleBlock}>
         <Text style={look.title}>{title}</Text>
         <Text style={look.number}>{paper.number}</Text>
       </View>
@@ -111,20 +112,23 @@ function Foot({ paper, name, words }: { paper: PaperBase; name: string; words: W
     words.page.replace("{n}", String(pageNumber)).replace("{of}", String(totalPages));
   return (
     <View style={look.foot} fixed>
-      <View style={look.spread}>
-        <Text>{facts}</Text>
-        <Text render={count} />
-      </View>
+      <Text>{facts}</Text>
       <Text style={look.hash}>{`SHA-256 ${groupedHash(paper.sha256)}`}</Text>
+      <Text style={look.pageCount} render={count} />
     </View>
   );
 }
 
-/** Two columns of prose: what was said, what it was. */
+/** Three short texts stand side by side, longer ones in pairs. */
+const SHORT = 300;
+
+/** Columns of prose: what was said, what it was. */
 export function Prose({ parts }: { parts: readonly { heading: string; text: string }[] }) {
   const shown = parts.filter((part) => part.text.trim() !== "");
+  const perRow = shown.length === 3 && shown.every((part) => part.text.length < SHORT) ? 3 : 2;
   const rows: (typeof shown)[] = [];
-  for (let at = 0; at < shown.length; at += 2) rows.push(shown.slice(at, at + 2));
+  for (let at = 0; at < shown.length; at += perRow) rows.push(shown.slice(at, at + perRow));
+  const width = shown.length === 1 ? "100%" : perRow === 3 ? "31%" : "47.5%";
   return (
     <View style={{ paddingTop: px(14), paddingBottom: px(6) }}>
       {rows.map((pair) => (
@@ -134,7 +138,7 @@ export function Prose({ parts }: { parts: readonly { heading: string; text: stri
           wrap={pair.some((part) => part.text.length > 1200)}
         >
           {pair.map((part) => (
-            <View key={part.heading} style={{ width: rows.length === 1 && pair.length === 1 ? "100%" : "47.5%" }}>
+            <View key={part.heading} style={{ width }}>
               <Text style={look.h2} minPresenceAhead={px(32)}>
                 {part.heading}
               </Text>

@@ -1,5 +1,6 @@
-import { View } from "@react-pdf/renderer";
-import { Authorizations, NotDoneList, Proof, Terms } from "./closing";
+import { Text } from "@react-pdf/renderer";
+import type { ReactElement } from "react";
+import { authorizationRows, NotDoneList, Proof, Section, Terms } from "./closing";
 import { Frame, Prose, type Writing } from "./frame";
 import { billedRows, ItemHead, WithTotal } from "./items";
 import { look } from "./look";
@@ -13,9 +14,7 @@ const fitsBeside = (list: Authorization[]) =>
 const quoted = (words: string) => (words.trim() ? `“${words.trim()}”` : "");
 
 export function Invoice({ paper, words, formats }: { paper: InvoiceModel } & Writing) {
-  const record = (
-    <Authorizations list={paper.authorizations} partsReturned={paper.partsReturned} words={words} formats={formats} />
-  );
+  const record = authorizationRows(paper.authorizations, paper.partsReturned, { words, formats });
   const isBeside = fitsBeside(paper.authorizations);
   return (
     <Frame paper={paper} title={words.invoice} words={words} formats={formats}>
@@ -28,12 +27,24 @@ export function Invoice({ paper, words, formats }: { paper: InvoiceModel } & Wri
       />
       <ItemHead words={words} priceLabel={words.price} />
       <WithTotal rows={paper.jobs.flatMap((job, index) => billedRows(job, index, { words, formats }))}>
-        <Sums totals={paper.totals} beside={isBeside ? record : undefined} words={words} formats={formats} />
+        <Sums
+          totals={paper.totals}
+          beside={isBeside ? <Beside heading={words.agreedTo} rows={record} /> : undefined}
+          words={words}
+          formats={formats}
+        />
       </WithTotal>
-      {!isBeside && <View style={look.section}>{record}</View>}
+      {!isBeside && <Section heading={words.agreedTo} rows={record} />}
       <Proof paper={paper} words={words} />
       <NotDoneList list={paper.notDone} words={words} />
       <Terms warranty={paper.warranty} legal={paper.legal} words={words} />
     </Frame>
   );
 }
+
+const Beside = ({ heading, rows }: { heading: string; rows: ReactElement[] }) => (
+  <>
+    <Text style={look.h2}>{heading}</Text>
+    {rows}
+  </>
+);

@@ -20,7 +20,8 @@ const rule = (width: number, color: string) => ({
 });
 
 export const PAGE_GUTTER = 56;
-export const FOOT_HEIGHT = 62;
+/** Room kept free for the foot: its rule lies 69 px above the edge. */
+const FOOT = 86;
 
 const row = { flexDirection: "row" as const };
 
@@ -28,7 +29,7 @@ export const look = {
   page: {
     paddingTop: px(52),
     paddingHorizontal: px(PAGE_GUTTER),
-    paddingBottom: px(40 + FOOT_HEIGHT),
+    paddingBottom: px(FOOT),
     fontFamily: TEXT,
     fontWeight: 400,
     color: INK,
@@ -42,6 +43,7 @@ export const look = {
   strong: { fontWeight: 600 },
   shopName: { fontFamily: WIDE, fontWeight: 600, ...size(17, 22), marginBottom: px(4) },
   title: { fontFamily: WIDE, fontWeight: 600, ...size(26, 30), textAlign: "right" },
+  titleBlock: { width: px(250), alignItems: "flex-end" },
   number: { fontFamily: FIGURES, ...size(13, 18), marginTop: px(2), textAlign: "right" },
   facts: {
     ...row,
@@ -112,5 +114,6 @@ export const look = {
     ...size(9.5, 13),
     color: LABEL,
   },
+  pageCount: { position: "absolute", right: 0, top: px(8), width: px(120), height: px(13), textAlign: "right" },
   hash: { fontFamily: FIGURES, ...size(7.5, 12) },
 } satisfies Styles;

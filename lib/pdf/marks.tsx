@@ -1,9 +1,10 @@
 import { Circle, Line, Rect, Svg, Text, View } from "@react-pdf/renderer";
+import type { ReactElement } from "react";
 import { BAND, FAMILY, INK, LABEL, look, px, RULE, RULE_2 } from "./look";
 import type { ReadingMark, ReadingRow } from "./models";
 import type { Words } from "./words";
 
-const WIDTH = 216;
+const WIDTH = 204;
 const HEIGHT = 20;
 const EDGE = 6;
 
@@ -34,51 +35,50 @@ const rowStyle = {
   borderTopStyle: "solid" as const,
 };
 
-/** Readings against their usual bands; with `single` there is no after yet. */
-export function Readings({
-  rows,
-  words,
-  single = false,
-}: {
-  rows: readonly ReadingRow[];
+interface RowProps {
+  row: ReadingRow;
   words: Words;
+  /** Nothing was measured after a repair yet. */
   single?: boolean;
-}) {
-  const hasPlaces = rows.some((row) => row.place);
+  /** The place is written once for rows that share it. */
+  place?: string;
+  hasPlaces: boolean;
+}
+
+function Reading({ row, words, single = false, place: where, hasPlaces }: RowProps) {
   return (
-    <View>
-      {rows.map((row, index) => {
-        const isSamePlace = index > 0 && rows[index - 1]?.place === row.place;
-        return (
-          <View key={`${row.place ?? ""} ${row.label}`} style={rowStyle} wrap={false}>
-            {hasPlaces && (
-              <Text style={{ width: px(130), fontWeight: 600, paddingRight: px(8) }}>
-                {isSamePlace ? "" : (row.place ?? "")}
-              </Text>
-            )}
-            <Text style={{ flexGrow: 1, flexShrink: 1, flexBasis: 0, paddingRight: px(8) }}>{row.label}</Text>
-            <Text
-              style={{
-                ...look.figures,
-                width: px(92),
-                textAlign: "right",
-                marginRight: px(14),
-                color: single ? INK : LABEL,
-              }}
-            >
-              {row.before?.value ?? words.notMeasured}
-            </Text>
-            <BandMark before={row.before} after={row.after} />
-            {!single && (
-              <Text
-                style={{ ...look.figures, fontWeight: 600, width: px(100), textAlign: "right", paddingLeft: px(8) }}
-              >
-                {row.after?.value ?? words.notMeasured}
-              </Text>
-            )}
-          </View>
-        );
-      })}
+    <View style={rowStyle} wrap={false}>
+      {hasPlaces && <Text style={{ width: px(150), fontWeight: 600, paddingRight: px(8) }}>{where ?? ""}</Text>}
+      <Text style={{ flexGrow: 1, flexShrink: 1, flexBasis: 0, paddingRight: px(8) }}>{row.label}</Text>
+      <Text
+        style={{ ...look.figures, width: px(92), textAlign: "right", marginRight: px(14), color: single ? INK : LABEL }}
+      >
+        {row.before?.value ?? words.notMeasured}
+      </Text>
+      <BandMark before={row.before} after={row.after} />
+      {!single && (
+        <Text style={{ ...look.figures, fontWeight: 600, width: px(92), textAlign: "right", paddingLeft: px(8) }}>
+          {row.after?.value ?? words.notMeasured}
+        </Text>
+      )}
     </View>
   );
+}
+
+/** Readings against their usual bands, one element a row. */
+export function readingRows(rows: readonly ReadingRow[], words: Words, single = false): ReactElement[] {
+  const hasPlaces = rows.some((row) => row.place);
+  return rows.map((row, index) => {
+    const isSamePlace = index > 0 && rows[index - 1]?.place === row.place;
+    return (
+      <Reading
+        key={`${row.place ?? ""} ${row.label}`}
+        row={row}
+        words={words}
+        single={single}
+        place={isSamePlace ? undefined : row.place}
+        hasPlaces={hasPlaces}
+      />
+    );
+  });
 }

@@ -1,10 +1,10 @@
 import { Text, View } from "@react-pdf/renderer";
 import type { ReactElement } from "react";
-import { Terms } from "./closing";
+import { Section, Terms } from "./closing";
 import { Frame, Prose, type Writing } from "./frame";
 import { ItemHead, JobRow, jobRows, LineRow, NoteRow, WithTotal } from "./items";
 import { INK, look, px } from "./look";
-import { Readings } from "./marks";
+import { readingRows } from "./marks";
 import type { OfferedJob, QuoteModel } from "./models";
 import { Sums } from "./sums";
 
@@ -31,7 +31,11 @@ function Choice({ words }: { words: Writing["words"] }) {
 
 function offeredRows(job: OfferedJob, index: number, { words, formats }: Writing): ReactElement[] {
   const urgency = { now: words.neededNow, soon: words.soon, optional: words.optional }[job.urgency];
-  const under = [urgency, job.isSafety ? words.safety : null, job.needs ? `${words.needs}: ${job.needs}` : null]
+  const under = [
+    `${urgency}, ${words.withTax}`,
+    job.isSafety ? words.safety : null,
+    job.needs ? `${words.needs}: ${job.needs}` : null,
+  ]
     .filter(Boolean)
     .join(" · ");
   const rest = [
@@ -49,8 +53,13 @@ function offeredRows(job: OfferedJob, index: number, { words, formats }: Writing
 
 /** The quote on paper, for who wants to read or sign it away from a screen. Prices of jobs are with tax, as on the customer's page. */
 export function Quote({ paper, words, formats }: { paper: QuoteModel } & Writing) {
-  const before = paper.agreed.map((each, index) => (
-    <JobRow key={`agreed ${index}`} title={`${each.label}, ${words.agreed}`} amount={formats.money(each.amountMinor)} />
+  const before = paper.agreed.map((each) => (
+    <JobRow
+      key={`agreed ${each.label}`}
+      title={each.label}
+      under={`${words.agreedBefore}, ${words.withTax}`}
+      amount={formats.money(each.amountMinor)}
+    />
   ));
   const rows = [...before, ...paper.jobs.flatMap((job, index) => offeredRows(job, index, { words, formats }))];
   return (
@@ -62,16 +71,17 @@ export function Quote({ paper, words, formats }: { paper: QuoteModel } & Writing
         ]}
       />
       {paper.readings.length > 0 && (
-        <View style={{ marginBottom: px(16) }}>
-          <View style={{ ...look.spread, marginBottom: px(6) }} minPresenceAhead={px(60)}>
-            <Text style={{ ...look.h2, flexShrink: 1, paddingRight: px(12) }}>{paper.readingsTitle}</Text>
-            <Text style={look.small}>{words.legendOne}</Text>
-          </View>
-          <Readings rows={paper.readings} words={words} single />
-          {paper.readingsNote ? <Text style={{ ...look.small, marginTop: px(4) }}>{paper.readingsNote}</Text> : null}
-        </View>
+        <>
+          <Section
+            heading={paper.readingsTitle}
+            aside={words.legendOne}
+            rows={readingRows(paper.readings, words, true)}
+            strength={1}
+          />
+          <Text style={{ ...look.small, marginTop: px(4), marginBottom: px(16) }}>{paper.readingsNote}</Text>
+        </>
       )}
-      <ItemHead words={words} priceLabel={words.priceWithTax} />
+      <ItemHead words={words} priceLabel={words.price} />
       <WithTotal rows={rows}>
         <Sums
           totals={{ netMinor: paper.totals.netMinor, taxes: paper.totals.taxes, totalMinor: paper.totals.totalMinor }}

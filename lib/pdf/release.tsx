@@ -1,5 +1,5 @@
 import { Text, View } from "@react-pdf/renderer";
-import { Authorizations, NotDoneList, Proof, Terms } from "./closing";
+import { authorizationRows, NotDoneList, Proof, Section, Terms } from "./closing";
 import { Frame, Prose, type Writing } from "./frame";
 import { billedRows, ItemHead, WithTotal } from "./items";
 import { look, px } from "./look";
@@ -39,14 +39,10 @@ export function Release({ paper, words, formats }: { paper: ReleaseModel } & Wri
         </View>
       )}
       <Proof paper={paper} words={words} />
-      <View style={look.section}>
-        <Authorizations
-          list={paper.authorizations}
-          partsReturned={paper.partsReturned}
-          words={words}
-          formats={formats}
-        />
-      </View>
+      <Section
+        heading={words.agreedTo}
+        rows={authorizationRows(paper.authorizations, paper.partsReturned, { words, formats })}
+      />
       <Terms warranty={paper.jobs.length > 0 ? paper.warranty : ""} legal={paper.legal} words={words} />
     </Frame>
   );

@@ -23,7 +23,6 @@ const en = {
   quantity: "Quantity",
   each: "Each",
   price: "Price",
-  priceWithTax: "Price with tax",
   hours: "h",
   partNumber: "No.",
   new: "new",
@@ -67,7 +66,6 @@ const en = {
   sign: "Name, date, signature",
   answer: "Your answer",
   answerHow: "Tick each job. Nothing is done without your yes, and never for more than the price beside it.",
-  continued: "continued",
   page: "Page {n} of {of}",
 };
 
@@ -96,7 +94,6 @@ const es: Words = {
   quantity: "Cantidad",
   each: "Unidad",
   price: "Precio",
-  priceWithTax: "Precio con impuestos",
   hours: "h",
   partNumber: "N.º",
   new: "nueva",
@@ -140,7 +137,6 @@ const es: Words = {
   sign: "Nombre, fecha, firma",
   answer: "Su respuesta",
   answerHow: "Marque cada trabajo. Nada se hace sin su sí, y nunca por más del precio indicado.",
-  continued: "continuación",
   page: "Página {n} de {of}",
 };
 
@@ -167,7 +163,6 @@ const fr: Words = {
   quantity: "Quantité",
   each: "Unité",
   price: "Prix",
-  priceWithTax: "Prix taxes comprises",
   hours: "h",
   partNumber: "Réf.",
   new: "neuve",
@@ -211,7 +206,6 @@ const fr: Words = {
   sign: "Nom, date, signature",
   answer: "Votre réponse",
   answerHow: "Cochez chaque travail. Rien n’est fait sans votre oui, et jamais pour plus que le prix indiqué.",
-  continued: "suite",
   page: "Page {n} sur {of}",
 };
 
@@ -238,7 +232,6 @@ const de: Words = {
   quantity: "Menge",
   each: "Einzeln",
   price: "Preis",
-  priceWithTax: "Preis mit Steuer",
   hours: "Std.",
   partNumber: "Nr.",
   new: "neu",
@@ -282,7 +275,6 @@ const de: Words = {
   sign: "Name, Datum, Unterschrift",
   answer: "Ihre Antwort",
   answerHow: "Kreuzen Sie jede Arbeit an. Ohne Ihr Ja geschieht nichts, und nie für mehr als den Preis daneben.",
-  continued: "Fortsetzung",
   page: "Seite {n} von {of}",
 };
 

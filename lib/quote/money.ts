@@ -45,21 +45,29 @@ export function toDecimal(minor: number, digits: number): string {
   return digits === 0 ? sign + all : `${sign}${all.slice(0, -digits)}.${all.slice(-digits)}`;
 }
 
+// making a formatter costs a hundred times what using it does
+const formats = new Map<string, Intl.NumberFormat>();
+
+function currencyFormat(currency: string, locale: string): Intl.NumberFormat {
+  const key = `${locale} ${currency}`;
+  let format = formats.get(key);
+  if (!format) {
+    const digits = minorDigits(currency);
+    format = new Intl.NumberFormat(locale, { style: "currency", currency, minimumFractionDigits: digits, maximumFractionDigits: digits });
+    formats.set(key, format);
+  }
+  return format;
+}
+
 /**
  * An amount as people of that locale write it, with the currency's decimals and a real minus sign.
  *
  * @param minor integer minor units
  */
 export function formatMoney(minor: number, currency: string, locale: string): string {
-  const digits = minorDigits(currency);
-  const format = new Intl.NumberFormat(locale, {
-    style: "currency",
-    currency,
-    minimumFractionDigits: digits,
-    maximumFractionDigits: digits,
-  });
   // a decimal text is formatted exactly, whatever its size
-  return format.format(toDecimal(minor, digits) as Intl.StringNumericLiteral).replace("-", "−");
+  const text = toDecimal(minor, minorDigits(currency)) as Intl.StringNumericLiteral;
+  return currencyFormat(currency, locale).format(text).replace("-", "−");
 }
 
 export type ParsedMoney =

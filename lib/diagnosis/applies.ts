@@ -19,7 +19,7 @@ const direct: Need = (v) => v.fuelSystem === undefined || v.fuelSystem === "dire
 const distributor: Need = (v) => v.ignition === undefined || v.ignition === "distributor" || v.ignition === "points";
 const points: Need = (v) => v.ignition === undefined || v.ignition === "points";
 const adjustableTiming: Need = (v) => distributor(v);
-const electronicEngine: Need = (v) => injected(v) || (v.modelYear !== undefined && v.modelYear >= 1981);
+const electronicEngine: Need = (v) => injected(v) || (v.o2Sensing !== undefined && v.o2Sensing !== "none");
 const year = (v: CaseVehicle) => v.modelYear ?? 2005;
 
 const CAUSE_NEEDS: Partial<Record<CauseId, Need>> = {

@@ -337,10 +337,11 @@ export class ReadingFindings {
         )
           now = say("slow", `crosses only ${crossings.value} times in 10 s`, "mech");
         else if (moves) now = say("swings", "swings as it should", null);
-        else if (mean && mean.value > 0.7)
-          now = { states: ["stuck-high"], words: `averages ${mean.value} V`, from, abnormal: true, family: "rich" };
-        else if (mean && mean.value < 0.25)
-          now = { states: ["stuck-low"], words: `averages ${mean.value} V`, from, abnormal: true, family: "lean" };
+        // A mean alone, beside trims, is the trims said again (or a contradiction, noted there); without them it counts.
+        else if (mean && mean.value > 0.7 && !this.trimsIn(mode, bank))
+          now = say("stuck-high", `averages ${mean.value} V`, "rich");
+        else if (mean && mean.value < 0.25 && !this.trimsIn(mode, bank))
+          now = say("stuck-low", `averages ${mean.value} V`, "lean");
         if (now && (!best || (now.abnormal && !best.abnormal))) best = now;
       }
       if (best) {
@@ -354,6 +355,13 @@ export class ReadingFindings {
       const drop = both[0]?.abnormal ? both[1] : both[0];
       this.found.splice(this.found.indexOf(drop as Observation), 1);
     }
+  }
+
+  private trimsIn(mode: Mode, bank: 1 | 2): boolean {
+    return (
+      this.r.one(bank === 1 ? "SHRTFT1" : "SHRTFT2", mode) !== undefined ||
+      this.r.one(bank === 1 ? "LONGFT1" : "LONGFT2", mode) !== undefined
+    );
   }
 
   private rearSensors(): void {
@@ -435,10 +443,12 @@ export class ReadingFindings {
       const c = co?.value ?? 0;
       const h = hc?.value ?? 0;
       const ox = o2?.value ?? 0;
+      // Fixed jets run richer in thin air, about √(density): what the altitude explains is not a fault.
+      const richLimit = 4 + 30 * Math.max(0, 1 - Math.sqrt(this.baro / 101.3));
       let state = "normal";
       if ((nox?.value ?? 0) > 1200 && mode !== "accelerating") state = "high-nox";
       else if (carb) {
-        if (c > 4) state = "rich";
+        if (c > richLimit) state = "rich";
         else if (h > 450 && ox > 1.5 && c > 0.5) state = "misfire";
         else if (c < 0.45 && ox > 2) state = "lean";
         else if (h > 900) state = "misfire";
@@ -1267,10 +1277,12 @@ export class ReadingFindings {
     const quietTrims = totals.length > 0 && totals.every((p) => Math.abs((p[0] ?? 0) + (p[1] ?? 0)) <= 6);
     const abnormal = this.found.some((f) => f.abnormal) || (totals.length > 0 && !quietTrims);
     const subjects = measured.size + (quietTrims ? totals.length : 0);
-    if (!abnormal && subjects >= 5 && this.r.caseFile.codes.length === 0)
+    // A stored code beside nothing but healthy readings is history until it is seen again; more must then be healthy.
+    const codes = this.r.caseFile.codes.length;
+    if (!abnormal && subjects >= (codes > 0 ? 7 : 5))
       this.sign(
         "readings-all-quiet",
-        ["yes"],
+        [subjects >= 9 && codes === 0 ? "broad" : "some"],
         `${subjects} subjects measured, none out of the ordinary`,
         [],
         false,

@@ -28,8 +28,11 @@ export function repetitionFactors(
       (isTest(o) === isTest(observations[best]) && range(rows[i] ?? []) > range(rows[best] ?? []));
     if (better) strongest.set(o.theme, i);
   });
+  const hasTrims = observations.some((o) => o.kind === "trims");
   return observations.map((o, i) => {
     if (!o.theme || !o.abnormal || o.kind === "test") return 1;
+    // The code says what the control unit once saw; trims measured now say it better.
+    if (o.kind === "code" && o.theme === "mixture" && hasTrims) return 0.5;
     return strongest.get(o.theme) === i ? 1 : 0.5;
   });
 }

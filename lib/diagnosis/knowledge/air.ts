@@ -154,7 +154,7 @@ export const AIR: KnowledgePart = {
     source: `${CP}; engine model`,
   },
   "charge-air-leak": {
-    prior: 20,
+    prior: 17,
     wear: "age",
     reported: {
       "lacks-power": 62,
@@ -373,7 +373,7 @@ export const AIR: KnowledgePart = {
     },
     circumstances: { intermittent: 40 },
     codes: { "throttle-signal": 66, "throttle-actuator": 6 },
-    signs: { "readings-all-quiet": { yes: 60 }, "idle-speed": { high: 10 } },
+    signs: { "readings-all-quiet": { broad: 15, some: 38 }, "idle-speed": { high: 10 } },
     tests: { "throttle-sweep": { glitch: 88 }, "wiggle-heat-cold": { "fault-appears": 30 } },
     why: "The signal of pedal or plate drops out at one place: bucking and hesitation there, quiet trims elsewhere.",
     source: CP,

@@ -130,7 +130,7 @@ export const IGNITION: KnowledgePart = {
     source: CP,
   },
   "ignition-primary-fault": {
-    prior: 11,
+    prior: 15,
     reported: {
       "no-start-cranks": 56,
       misfires: 20,

@@ -27,7 +27,7 @@ export const MECHANICAL: KnowledgePart = {
       cranking: { fast: 10 },
     },
     tests: {
-      compression: { "one-low": 66, "adjacent-low": 3, "several-low": 12, "all-low": 16, even: 4 },
+      compression: { "one-low": 64, "adjacent-low": 3, "several-low": 12, "all-low": 18, even: 4 },
       "compression-wet": { rises: 52, "no-change": 48 },
       "cylinder-leakdown": { intake: 22, exhaust: 34, crankcase: 36, coolant: 1, "in-spec": 7 },
       "relative-compression": { "one-low": 74, "several-low": 14, "even-but-fast": 4, even: 9 },
@@ -59,7 +59,7 @@ export const MECHANICAL: KnowledgePart = {
     },
     tests: {
       "combustion-gas-in-coolant": { positive: 88 },
-      "cooling-pressure": { leaks: 68 },
+      "cooling-pressure": { leaks: 42 },
       "cylinder-leakdown": { coolant: 62, crankcase: 3, "in-spec": 28 },
       compression: { "adjacent-low": 36, "one-low": 22, even: 38, "all-low": 1 },
       "compression-wet": { rises: 5, "no-change": 95 },
@@ -101,7 +101,7 @@ export const MECHANICAL: KnowledgePart = {
     tests: {
       "cam-crank-correlation": { off: 93 },
       "vacuum-gauge": { "steady-low": 72, "steady-normal": 15, "needle-drops": 10 },
-      compression: { "all-low": 38, even: 52, "several-low": 8, "one-low": 2 },
+      compression: { "all-low": 22, even: 68, "several-low": 8, "one-low": 2 },
       "relative-compression": { "even-but-fast": 26, even: 64 },
       "timing-light": { late: 14, early: 8, "in-spec": 78 },
       "phaser-command": { moves: 86, "no-motion": 14 },
@@ -242,7 +242,7 @@ export const MECHANICAL: KnowledgePart = {
     },
     signs: {
       misfires: { none: 95 },
-      "readings-all-quiet": { yes: 82 },
+      "readings-all-quiet": { broad: 38, some: 40 },
       gas: { normal: 92 },
       "idle-speed": { normal: 95 },
       "full-load-breathing": { normal: 97 },
@@ -258,7 +258,7 @@ export const MECHANICAL: KnowledgePart = {
     source: CP,
   },
   "no-fault-found": {
-    prior: 34,
+    prior: 42,
     reported: {
       hesitates: 14,
       "lacks-power": 14,
@@ -294,7 +294,7 @@ export const MECHANICAL: KnowledgePart = {
       "idle-air": { normal: 96 },
       "knock-retard": { normal: 98.5 },
       rail: { "as-commanded": 98.5 },
-      "readings-all-quiet": { yes: 94 },
+      "readings-all-quiet": { broad: 58, some: 36 },
       loop: { closed: 99.3 },
       "rear-o2": { normal: 99 },
     },

@@ -176,7 +176,7 @@ export const SENSORS: KnowledgePart = {
     prior: 6,
     reported: { "mil-on": 50, knocks: 12, "lacks-power": 18, "poor-economy": 14, hesitates: 12, "hard-start-cold": 6 },
     codes: { iat: 72 },
-    signs: { "readings-all-quiet": { yes: 45 } },
+    signs: { "readings-all-quiet": { broad: 10, some: 27 } },
     tests: { "iat-resistance": { "off-curve": 90 }, "soak-compare": { "intake-off": 85, agree: 13 } },
     why: "Intake air temperature disagrees with everything else after a soak; a pressure-metered engine then misjudges air density.",
     source: CP,
@@ -208,7 +208,7 @@ export const SENSORS: KnowledgePart = {
     signs: { misfires: { none: 70, several: 22 }, "pump-feed": { none: 4 } },
     tests: {
       "crank-signal": { missing: 55, erratic: 34, clean: 11 },
-      "spark-tester": { "weak-or-none-all": 42, strong: 57 },
+      "spark-tester": { "weak-or-none-all": 34, strong: 65 },
       "injector-signal": { missing: 42 },
       "fuel-pressure": { none: 10, low: 5, "in-spec": 84 },
       "wiggle-heat-cold": { "fault-appears": 36 },
@@ -258,13 +258,13 @@ export const SENSORS: KnowledgePart = {
     source: CP,
   },
   "engine-overheating": {
-    prior: 13,
+    prior: 16,
     reported: { overheats: 88, "lacks-power": 5, knocks: 6, "mil-on": 10 },
     circumstances: { warm: 20, uphill: 16 },
     codes: { overheat: 36, "ect-range": 4 },
     signs: { coolant: { hot: 84, cool: 0.5, "implausibly-cold": 0.2 }, "knock-retard": { high: 14 } },
     tests: {
-      "cooling-pressure": { leaks: 55, holds: 45 },
+      "cooling-pressure": { leaks: 62, holds: 38 },
       "combustion-gas-in-coolant": { positive: 2.5 },
       "thermostat-warm-up": { slow: 1, normal: 99 },
       "ect-resistance": { "off-curve": 2 },

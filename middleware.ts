@@ -47,7 +47,8 @@ export function middleware(request: NextRequest): NextResponse {
   const response = NextResponse.next({ request: { headers } });
   response.headers.set("content-security-policy", csp);
   response.headers.set("x-content-type-options", "nosniff");
-  response.headers.set("referrer-policy", "no-referrer");
+  // not "no-referrer": a form posted from our own page would then come without its origin
+  response.headers.set("referrer-policy", "same-origin");
   response.headers.set("permissions-policy", "camera=(self), microphone=(), geolocation=()");
   response.headers.set("cross-origin-opener-policy", "same-origin");
   response.headers.set("x-request-id", headers.get("x-request-id") ?? "");

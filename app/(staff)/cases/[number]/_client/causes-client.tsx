@@ -24,10 +24,7 @@ export function CausesClient({ caseId, mayMark, ...props }: CausesClientProps) {
       {...props}
       onRecord={(outcome) => done("test.record", { ...outcome })}
       onUndo={(outcomeId) => done("test.undo", { outcomeId })}
-      onMark={
-        mayMark ? (input) => done("cause.mark", { ...input })
-          : undefined
-      }
+      onMark={mayMark ? (input) => done("cause.mark", { ...input }) : undefined}
       onUnmark={mayMark ? (markId, reason) => done("cause.unmark", { markId, reason }) : undefined}
     />
   );

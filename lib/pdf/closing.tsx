@@ -1,6 +1,7 @@
 import { Text, View } from "@react-pdf/renderer";
 import type { ReactElement } from "react";
 import type { Writing } from "./frame";
+import { Lines, oneLine } from "./lines";
 import { look, px } from "./look";
 import { readingRows } from "./marks";
 import type { Authorization, InvoiceModel, NotDone } from "./models";
@@ -17,19 +18,10 @@ export function authorizationRows(
     const said = each.words ? ` “${each.words}”` : "";
     const taken = each.takenBy && each.takenBy !== "link" ? `, ${words.takenBy} ${each.takenBy}` : "";
     const text = `${each.what} ${formats.money(each.amountMinor)}, ${words.withTax}, ${words.under} ${each.givenBy}, ${each.how}${contact}, ${formats.instant(each.at)}${taken}.${said}`;
-    return (
-      <Text key={each.at + each.what} style={entry}>
-        {text}
-      </Text>
-    );
+    return <Lines key={each.at + each.what} style={entry} text={text} />;
   });
   if (!partsReturned) return rows;
-  return [
-    ...rows,
-    <Text key="parts" style={entry}>
-      {partsReturned}
-    </Text>,
-  ];
+  return [...rows, <Lines key="parts" style={entry} text={partsReturned} />];
 }
 
 /** A section whose rule and heading never part from the first of its rows. */
@@ -65,8 +57,8 @@ export function NotDoneList({ list, words }: { list: NotDone[]; words: Writing["
   if (list.length === 0) return null;
   const rows = list.map((each) => (
     <Text key={each.title} style={{ marginBottom: px(5) }}>
-      <Text style={look.strong}>{each.title}</Text>
-      {each.why ? `. ${each.why}` : ""}
+      <Text style={look.strong}>{oneLine(each.title)}</Text>
+      {each.why ? `. ${oneLine(each.why)}` : ""}
     </Text>
   ));
   return <Section heading={words.notDone} rows={rows} />;
@@ -79,11 +71,7 @@ export function Proof({ paper, words }: { paper: InvoiceModel; words: Writing["w
   const rows = [
     ...readingRows(paper.readings, words, !hasAfter),
     ...(paper.proof
-      ? [
-          <Text key="proof" style={{ paddingTop: px(8), paddingRight: px(110) }}>
-            {paper.proof}
-          </Text>,
-        ]
+      ? [<Lines key="proof" style={{ paddingTop: px(8), paddingRight: px(110) }} text={paper.proof} />]
       : []),
   ];
   return <Section heading={hasAfter || paper.proof ? words.measured : words.found} aside={aside} rows={rows} />;
@@ -95,17 +83,11 @@ export function Terms({ warranty, legal, words }: { warranty: string; legal: str
       ? [
           <Text key="warranty" style={look.small}>
             <Text style={look.strong}>{`${words.warranty}. `}</Text>
-            {warranty}
+            {oneLine(warranty)}
           </Text>,
         ]
       : []),
-    ...(legal
-      ? [
-          <Text key="legal" style={{ ...look.small, marginTop: px(4) }}>
-            {legal}
-          </Text>,
-        ]
-      : []),
+    ...(legal ? [<Lines key="legal" style={{ ...look.small, marginTop: px(4) }} text={legal} />] : []),
   ];
   return rows.length > 0 ? <Section rows={rows} strength={1} /> : null;
 }

@@ -1,7 +1,8 @@
 import { Document, Page, Text, View } from "@react-pdf/renderer";
 import type { ReactNode } from "react";
 import { type Formats, groupedHash } from "./format";
-import { look, px } from "./look";
+import { Lines } from "./lines";
+import { FOOT_TOP, look, PAGE_HEIGHT, px } from "./look";
 import type { PaperBase } from "./models";
 import type { Words } from "./words";
 
@@ -49,8 +50,8 @@ function Head({ paper, title }: { paper: PaperBase; title: string }) {
   return (
     <View style={look.spread}>
       <View style={{ maxWidth: px(430) }}>
-        <Text style={look.shopName}>{shop.name}</Text>
-        <Text style={look.small}>{[shop.address, contact].filter(Boolean).join("\n")}</Text>
+        <Lines style={look.shopName} text={shop.name} />
+        <Lines style={look.small} text={[shop.address, contact].filter(Boolean).join("\n")} />
       </View>
       <View style={look.titleBlock}>
         <Text style={look.title}>{title}</Text>
@@ -74,7 +75,7 @@ function Facts({ paper, words, formats }: { paper: PaperBase } & Writing) {
   const fact = (label: string, value: string, figures = false) => (
     <View style={{ marginBottom: px(4) }}>
       <Text style={look.label}>{label}</Text>
-      <Text style={figures ? look.figures : undefined}>{value}</Text>
+      <Lines style={figures ? look.figures : undefined} text={value} />
     </View>
   );
   const label =
@@ -111,11 +112,13 @@ function Foot({ paper, name, words }: { paper: PaperBase; name: string; words: W
   const count = ({ pageNumber, totalPages }: { pageNumber: number; totalPages: number }) =>
     words.page.replace("{n}", String(pageNumber)).replace("{of}", String(totalPages));
   return (
-    <View style={look.foot} fixed>
-      <Text>{facts}</Text>
-      <Text style={look.hash}>{`SHA-256 ${groupedHash(paper.sha256)}`}</Text>
-      <Text style={look.pageCount} render={count} />
-    </View>
+    <>
+      <View style={look.foot} fixed>
+        <Lines text={facts} />
+        <Text style={look.hash}>{`SHA-256 ${groupedHash(paper.sha256)}`}</Text>
+      </View>
+      <Text style={{ ...look.pageCount, top: px(PAGE_HEIGHT[paper.paper] - FOOT_TOP) }} render={count} fixed />
+    </>
   );
 }
 
@@ -142,7 +145,7 @@ export function Prose({ parts }: { parts: readonly { heading: string; text: stri
               <Text style={look.h2} minPresenceAhead={px(32)}>
                 {part.heading}
               </Text>
-              <Text>{part.text}</Text>
+              <Lines text={part.text} />
             </View>
           ))}
         </View>

@@ -1,6 +1,7 @@
 import { Text, View } from "@react-pdf/renderer";
 import type { ReactElement, ReactNode } from "react";
 import type { Writing } from "./frame";
+import { Lines, oneLine } from "./lines";
 import { look, px } from "./look";
 import type { BilledJob, PaperLine } from "./models";
 import type { Words } from "./words";
@@ -29,7 +30,7 @@ export function LineRow({ line, words, formats }: { line: PaperLine } & Writing)
   return (
     <View style={look.line} wrap={false}>
       <Text style={{ ...look.what, paddingLeft: px(12) }}>
-        {note ? `${line.description} (${note})` : line.description}
+        {oneLine(note ? `${line.description} (${note})` : line.description)}
       </Text>
       <Text style={{ ...look.figures, ...look.quantity }}>{formats.quantity(line)}</Text>
       <Text style={{ ...look.figures, ...look.each }}>{formats.money(line.unitPriceMinor)}</Text>
@@ -43,8 +44,8 @@ export function JobRow({ title, amount, under }: { title: string; amount: string
   return (
     <View style={look.jobHead}>
       <View style={look.what}>
-        <Text style={look.jobTitle}>{title}</Text>
-        {under ? <Text style={look.under}>{under}</Text> : null}
+        <Text style={look.jobTitle}>{oneLine(title)}</Text>
+        {under ? <Text style={look.under}>{oneLine(under)}</Text> : null}
       </View>
       <Text style={{ ...look.figures, ...look.price, ...look.strong }}>{amount}</Text>
     </View>
@@ -53,7 +54,7 @@ export function JobRow({ title, amount, under }: { title: string; amount: string
 
 export const NoteRow = ({ text }: { text: string }) => (
   <View style={{ paddingLeft: px(12), paddingBottom: px(3) }} wrap={false}>
-    <Text style={look.under}>{text}</Text>
+    <Lines style={look.under} text={text} />
   </View>
 );
 

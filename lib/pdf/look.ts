@@ -20,6 +20,9 @@ const rule = (width: number, color: string) => ({
 });
 
 export const PAGE_GUTTER = 56;
+export const PAGE_HEIGHT = { A4: 1122.5, Letter: 1056 } as const;
+/** Where the foot's first line begins, from the lower edge. */
+export const FOOT_TOP = 61;
 /** Room kept free for the foot: its rule lies 69 px above the edge. */
 const FOOT = 86;
 
@@ -114,6 +117,16 @@ export const look = {
     ...size(9.5, 13),
     color: LABEL,
   },
-  pageCount: { position: "absolute", right: 0, top: px(8), width: px(120), height: px(13), textAlign: "right" },
+  // measured from the top and dressed in full: its text is only known once the pages are, too late to inherit or to push up
+  pageCount: {
+    position: "absolute",
+    right: px(PAGE_GUTTER),
+    width: px(120),
+    fontFamily: TEXT,
+    fontWeight: 400,
+    ...size(9.5, 13),
+    color: LABEL,
+    textAlign: "right",
+  },
   hash: { fontFamily: FIGURES, ...size(7.5, 12) },
 } satisfies Styles;

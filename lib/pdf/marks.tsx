@@ -1,5 +1,6 @@
 import { Circle, Line, Rect, Svg, Text, View } from "@react-pdf/renderer";
 import type { ReactElement } from "react";
+import { oneLine } from "./lines";
 import { BAND, FAMILY, INK, LABEL, look, px, RULE, RULE_2 } from "./look";
 import type { ReadingMark, ReadingRow } from "./models";
 import type { Words } from "./words";
@@ -49,7 +50,7 @@ function Reading({ row, words, single = false, place: where, hasPlaces }: RowPro
   return (
     <View style={rowStyle} wrap={false}>
       {hasPlaces && <Text style={{ width: px(150), fontWeight: 600, paddingRight: px(8) }}>{where ?? ""}</Text>}
-      <Text style={{ flexGrow: 1, flexShrink: 1, flexBasis: 0, paddingRight: px(8) }}>{row.label}</Text>
+      <Text style={{ flexGrow: 1, flexShrink: 1, flexBasis: 0, paddingRight: px(8) }}>{oneLine(row.label)}</Text>
       <Text
         style={{ ...look.figures, width: px(92), textAlign: "right", marginRight: px(14), color: single ? INK : LABEL }}
       >

@@ -3,6 +3,7 @@ import type { ReactElement } from "react";
 import { Section, Terms } from "./closing";
 import { Frame, Prose, type Writing } from "./frame";
 import { ItemHead, JobRow, jobRows, LineRow, NoteRow, WithTotal } from "./items";
+import { Lines } from "./lines";
 import { INK, look, px } from "./look";
 import { readingRows } from "./marks";
 import type { OfferedJob, QuoteModel } from "./models";
@@ -78,7 +79,7 @@ export function Quote({ paper, words, formats }: { paper: QuoteModel } & Writing
             rows={readingRows(paper.readings, words, true)}
             strength={1}
           />
-          <Text style={{ ...look.small, marginTop: px(4), marginBottom: px(16) }}>{paper.readingsNote}</Text>
+          <Lines style={{ ...look.small, marginTop: px(4), marginBottom: px(16) }} text={paper.readingsNote || " "} />
         </>
       )}
       <ItemHead words={words} priceLabel={words.price} />
@@ -118,5 +119,5 @@ function Conditions({ paper, words, formats }: { paper: QuoteModel } & Writing) 
     ...(paper.readyAt ? [`${words.ready}: ${formats.instant(paper.readyAt)}`] : []),
     paper.keepParts ? words.keep : words.noKeep,
   ];
-  return <Text>{lines.join("\n")}</Text>;
+  return <Lines text={lines.join("\n")} />;
 }

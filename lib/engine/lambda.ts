@@ -3,6 +3,8 @@ const GAS_FUELS: Record<string, { hcv: number; ocv: number }> = {
   gasoline: { hcv: 1.7261, ocv: 0.0176 },
   LPG: { hcv: 2.525, ocv: 0 },
   CNG: { hcv: 4, ocv: 0 },
+  // The blend's own atom ratios, by ideal mixing of gasoline CH1.87 and ethanol.
+  E10: { hcv: 1.9449, ocv: 0.0331 },
 };
 
 export interface ExhaustGas {
@@ -12,7 +14,7 @@ export interface ExhaustGas {
   hcPpm: number;
   noxPpm?: number;
   /** Default gasoline, which is also what analysers assume for low ethanol blends. */
-  fuel?: "gasoline" | "LPG" | "CNG";
+  fuel?: "gasoline" | "LPG" | "CNG" | "E10";
   /** Carbon atoms an HC reading stands for: 6 for hexane by infrared (default). */
   k1?: number;
 }

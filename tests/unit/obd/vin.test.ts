@@ -11,13 +11,24 @@ interface Row {
   expected: any;
   source: string;
 }
-const rows: Row[] = JSON.parse(readFileSync(new URL("../../../fixtures/checks/vehicle-identification.json", import.meta.url), "utf8"));
+const rows: Row[] = JSON.parse(
+  readFileSync(new URL("../../../fixtures/checks/vehicle-identification.json", import.meta.url), "utf8"),
+);
 
 describe("VIN (49 CFR 565.15, ISO 3779, ISO 3780)", () => {
   it.each(rows)("$id", ({ input, expected, source }) => {
     if (typeof input === "string" && typeof expected === "object") {
       const got = checkVin(input);
-      expect({ sum: got.sum, remainder: got.remainder, check: got.expectedCheckDigit, valid: got.state === "valid", region: got.region }, source).toEqual(expected);
+      expect(
+        {
+          sum: got.sum,
+          remainder: got.remainder,
+          check: got.expectedCheckDigit,
+          valid: got.state === "valid",
+          region: got.region,
+        },
+        source,
+      ).toEqual(expected);
     } else if (typeof input === "string") {
       const state = checkVin(input).state;
       if (expected === "bad_model_year_or_check") expect(["bad_model_year", "bad_check_digit"]).toContain(state);
@@ -45,6 +56,8 @@ describe("VIN (49 CFR 565.15, ISO 3779, ISO 3780)", () => {
     fc.assert(fc.property(fc.string(), (text) => void checkVin(text)));
     const good = "1M8GDM9AXKP042788";
     for (let i = 11; i < 17; i++)
-      for (let d = 0; d <= 9; d++) if (String(d) !== good[i]) expect(checkVin(good.slice(0, i) + d + good.slice(i + 1)).state).toBe("bad_check_digit");
+      for (let d = 0; d <= 9; d++)
+        if (String(d) !== good[i])
+          expect(checkVin(good.slice(0, i) + d + good.slice(i + 1)).state).toBe("bad_check_digit");
   });
 });

@@ -17,6 +17,41 @@ const PLACES: Partial<Record<Mode, string>> = {
 /** Total trim usual band of the trade (common practice): within ten percent either way. */
 const TRIM = { low: -10, high: 10 };
 
+/** What a customer reads instead of the trade's name; a parameter without one is not shown to customers. */
+const PLAIN: Partial<Record<ParameterId, string>> = {
+  RPM: "Engine speed",
+  MAF: "Air drawn in",
+  MAP: "Pressure at the intake",
+  ECT: "Engine temperature",
+  IAT: "Air temperature",
+  SPARKADV: "Ignition timing",
+  baseTimingDeg: "Ignition timing",
+  dwellDeg: "Ignition dwell",
+  knockRetardDeg: "Timing held back",
+  manifoldVacuumKPa: "Suction",
+  backPressureKPa: "Pressure in the exhaust",
+  fuelPressureKPa: "Fuel pressure",
+  FRP: "Fuel pressure",
+  fuelPressureDropKPaIn5Min: "Fuel pressure lost",
+  O2S11: "Exhaust sensor",
+  O2S21: "Exhaust sensor, second",
+  O2S12: "Sensor after the catalyst",
+  O2S22: "Sensor after the catalyst, second",
+  o2s11CrossingsPer10s: "Exhaust sensor, swings",
+  EQ_RAT11: "Mixture",
+  coPct: "Carbon monoxide",
+  co2Pct: "Carbon dioxide",
+  o2Pct: "Oxygen left over",
+  hcPpm: "Unburnt fuel",
+  noxPpm: "Nitrogen oxides",
+  crankRpm: "Cranking speed",
+  crankingV: "Battery while cranking",
+  VPWR: "Supply voltage",
+  pumpV: "Voltage at the fuel pump",
+  idleAirPct: "Idle air",
+  CATEMP11: "Catalyst temperature",
+};
+
 const numberOf = (value: unknown): number | null =>
   typeof value === "number" && Number.isFinite(value) ? value : null;
 
@@ -49,14 +84,15 @@ function bandedReadings(samples: readonly Sample[], vehicle: CaseVehicle): Shown
       if (value === null || !(id in PARAMETERS)) continue;
       const parameter = id as ParameterId;
       const { state, band, family } = judge(parameter, value, sample.mode, vehicle);
-      if (!band || state === "impossible" || state === "unbanded") continue;
+      const label = PLAIN[parameter];
+      if (!label || !band || state === "impossible" || state === "unbanded") continue;
       const low = band.low ?? Math.min(0, value);
       const high = band.high ?? Math.max(low + 1, Math.abs(low) * 2);
       const at = (value - low) / (high - low || 1);
-      const { label, unit, decimals } = PARAMETERS[parameter];
+      const { unit, decimals } = PARAMETERS[parameter];
       shown.push({
         label: `${label}, ${(PLACES[sample.mode] ?? sample.mode).toLowerCase()}`,
-        value: `${value.toFixed(decimals)} ${unit}`.trim(),
+        value: `${value.toFixed(decimals).replace("-", "−")} ${unit.replace("° before TDC", "°")}`.trim(),
         at,
         family,
         inside: state !== "outside",

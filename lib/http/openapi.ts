@@ -37,6 +37,7 @@ export function openApiDocument(server: string) {
       post: {
         operationId: verb.name,
         summary: verb.summary,
+        "x-action": verb.action,
         description: `Allowed to: ${roles.join(", ")}.`,
         parameters: [
           {

@@ -12,7 +12,16 @@ export interface SnapshotOptions {
 }
 
 const formatTime = (at: Date, locale: string, timeZone: string) =>
-  new Intl.DateTimeFormat(locale, { timeZone, dateStyle: "long", timeStyle: "short", hourCycle: "h23" }).format(at);
+  new Intl.DateTimeFormat(locale === "en-US" ? "en-GB" : locale, {
+    timeZone,
+    day: "numeric",
+    month: "long",
+    hour: "2-digit",
+    minute: "2-digit",
+    hourCycle: "h23",
+  })
+    .format(at)
+    .replace(" at ", ", ");
 
 /** Everything the customer will see of a quote and nothing a customer must not see (cost, markup, notes). */
 export function snapshotOf(parts: CaseParts, { number, now, expiresAt }: SnapshotOptions): RevisionSnapshot {
@@ -87,7 +96,7 @@ export function snapshotOf(parts: CaseParts, { number, now, expiresAt }: Snapsho
     readings: shown.readings,
     readingsNote:
       measured && shown.readings.length > 0
-        ? `Measured ${formatTime(measured.takenAt, settings.locale, settings.timeZone)} by ${measured.takenByName}.`
+        ? `Measured on ${formatTime(measured.takenAt, settings.locale, settings.timeZone)} by ${measured.takenByName}.`
         : "",
     photoIds: parts.files
       .filter((file) => file.kind === "photo" && file.state === "ready" && file.forCustomer)

@@ -1,4 +1,13 @@
-export const ERROR_CODES = ["invalid", "unauthenticated", "forbidden", "not_found", "conflict", "precondition", "too_many", "internal"] as const;
+export const ERROR_CODES = [
+  "invalid",
+  "unauthenticated",
+  "forbidden",
+  "not_found",
+  "conflict",
+  "precondition",
+  "too_many",
+  "internal",
+] as const;
 export type ErrorCode = (typeof ERROR_CODES)[number];
 
 export interface FieldError {
@@ -14,7 +23,11 @@ export class AppError extends Error {
   /** For a conflict: what stands now, so that the screen can show both versions. */
   readonly current: unknown;
 
-  constructor(code: ErrorCode, message: string, options: { fields?: FieldError[]; current?: unknown; cause?: unknown } = {}) {
+  constructor(
+    code: ErrorCode,
+    message: string,
+    options: { fields?: FieldError[]; current?: unknown; cause?: unknown } = {},
+  ) {
     super(message, { cause: options.cause });
     this.name = "AppError";
     this.code = code;
@@ -23,6 +36,8 @@ export class AppError extends Error {
   }
 }
 
-export const notFound = (what = "This") => new AppError("not_found", `${what} does not exist, or belongs to another shop.`);
+export const notFound = (what = "This") =>
+  new AppError("not_found", `${what} does not exist, or belongs to another shop.`);
 
-export const invalidField = (pointer: string, detail: string) => new AppError("invalid", detail, { fields: [{ pointer, detail }] });
+export const invalidField = (pointer: string, detail: string) =>
+  new AppError("invalid", detail, { fields: [{ pointer, detail }] });

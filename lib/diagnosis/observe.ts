@@ -5,7 +5,7 @@ import { SIGN_BASE, TEST_BASE } from "./knowledge/base-rates";
 import { CODE_FAMILIES, type CodeFamily, codeFamily } from "./knowledge/code-families";
 import { SOUND_OUTCOMES } from "./knowledge/proving";
 import type { Observation, Theme } from "./observation";
-import { ReadingFindings } from "./reading-findings";
+import { readingFindings } from "./reading-findings";
 import { Readings } from "./readings";
 import { TESTS } from "./tests";
 import { trimObservation } from "./trim-findings";
@@ -181,13 +181,13 @@ export function observe(caseFile: CaseFile): { observations: Observation[]; read
   const readings = new Readings(caseFile);
   const recorded = recordedTests(caseFile, (path, message) => readings.note(path, message));
   const trims = trimObservation(readings);
-  const fromReadings = new ReadingFindings(readings).found;
+  const fromReadings = readingFindings(readings);
 
   const observations: Observation[] = [];
   if (trims) observations.push(trims);
   for (const o of fromReadings) {
     const same = o.kind === "test" ? recorded.find((x) => x.kind === "test" && x.test === o.test) : undefined;
-    if (!same || same.kind !== "test" || o.kind !== "test") {
+    if (same?.kind !== "test" || o.kind !== "test") {
       observations.push(o);
       continue;
     }

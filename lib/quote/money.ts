@@ -53,7 +53,12 @@ function currencyFormat(currency: string, locale: string): Intl.NumberFormat {
   let format = formats.get(key);
   if (!format) {
     const digits = minorDigits(currency);
-    format = new Intl.NumberFormat(locale, { style: "currency", currency, minimumFractionDigits: digits, maximumFractionDigits: digits });
+    format = new Intl.NumberFormat(locale, {
+      style: "currency",
+      currency,
+      minimumFractionDigits: digits,
+      maximumFractionDigits: digits,
+    });
     formats.set(key, format);
   }
   return format;
@@ -112,5 +117,10 @@ export function parseScaled(text: string, digits: number, locale: string): Parse
 export function parseMoney(text: string, currency: string, locale: string): ParsedMoney {
   const parts = new Intl.NumberFormat(locale, { style: "currency", currency }).formatToParts(1);
   const sign = parts.find((part) => part.type === "currency")?.value ?? currency;
-  return parseScaled(text.replace(sign, "").replace(currency, ""), minorDigits(currency), locale);
+  // where the sign stood between minus and digits it leaves a space
+  const bare = text
+    .replace(sign, "")
+    .replace(currency, "")
+    .replace(/^\s*([-−–])\s+/, "$1");
+  return parseScaled(bare, minorDigits(currency), locale);
 }

@@ -40,7 +40,9 @@ export function proofModesFrom(result: ProofResult, caseFile: CaseFile, options:
       figure: trim ? { before: signed(trim.before), after: signed(trim.after), unit: "% total trim" } : null,
       verdict,
       rule: ruleOf(verdict, rows),
-      rows: shown.flatMap((row) => [...trimParts(row, caseFile), ...(pairOf(row, caseFile, options) ?? [])]),
+      rows: shown.flatMap((row) =>
+        [...trimParts(row, caseFile), pairOf(row, caseFile, options)].filter((pair) => pair !== null),
+      ),
     };
   });
 }
@@ -61,12 +63,12 @@ function ruleOf(verdict: ProofVerdict, rows: readonly ProofRow[]): string {
   return `${(lead?.rule ?? "").replace(/^[^:]*: /, "").replace(/^./, (c) => c.toUpperCase())}${rest}`;
 }
 
-function pairOf(row: ProofRow, caseFile: CaseFile, options: ProofOptions): ProofPairView[] | null {
+function pairOf(row: ProofRow, caseFile: CaseFile, options: ProofOptions): ProofPairView | null {
   const units = options.units ?? METRIC;
   const id = [row.mode, row.parameter, row.bank, row.cylinder].filter((part) => part !== undefined).join("-");
   if (row.parameter === "TOTALFT") {
     const was = row.before ?? 0;
-    return [{
+    return {
       id,
       label: caseFile.vehicle.banks === 2 ? `Total trim, bank ${row.bank}` : "Total trim",
       unit: "%",
@@ -77,7 +79,7 @@ function pairOf(row: ProofRow, caseFile: CaseFile, options: ProofOptions): Proof
       decimals: 1,
       signed: true,
       verdict: row.verdict,
-    }];
+    };
   }
   const band = bandFor(row.parameter, row.mode, caseFile.vehicle, options.bands, caseFile.site);
   if (!band) return null;
@@ -105,35 +107,41 @@ function pairOf(row: ProofRow, caseFile: CaseFile, options: ProofOptions): Proof
     ),
     signed: PARAMETERS[row.parameter].signed === true,
     verdict: row.verdict,
-  }];
+  };
 }
 
 /** Short and long trim stand above the total they make up; they are shown, the total is judged. */
 function trimParts(row: ProofRow, caseFile: CaseFile): ProofPairView[] {
   if (row.parameter !== "TOTALFT" || row.verdict === "still-inside") return [];
-  const last = (phase: "before" | "after") => caseFile.samples?.filter((s) => s.mode === row.mode && s.phase === phase).at(-1)?.values;
-  return (row.bank === 2 ? (["SHRTFT2", "LONGFT2"] as const) : (["SHRTFT1", "LONGFT1"] as const)).flatMap((parameter) => {
-    const before = last("before")?.[parameter];
-    const after = last("after")?.[parameter];
-    if (typeof before !== "number") return [];
-    const band = bandFor(parameter, row.mode, caseFile.vehicle);
-    if (!band) return [];
-    const isOut = (band.high !== null && before > band.high) || (band.low !== null && before < band.low);
-    return [
-      {
-        id: `${row.mode}-${parameter}`,
-        label: caseFile.vehicle.banks === 2 ? PARAMETERS[parameter].label : PARAMETERS[parameter].label.replace(", bank 1", ""),
-        unit: "%",
-        before,
-        after: typeof after === "number" ? after : null,
-        band,
-        family: isOut ? (before > 0 ? ("lean" as const) : ("rich" as const)) : null,
-        decimals: 1,
-        signed: true,
-        verdict: "still-inside" as const,
-      },
-    ];
-  });
+  const last = (phase: "before" | "after") =>
+    caseFile.samples?.filter((s) => s.mode === row.mode && s.phase === phase).at(-1)?.values;
+  return (row.bank === 2 ? (["SHRTFT2", "LONGFT2"] as const) : (["SHRTFT1", "LONGFT1"] as const)).flatMap(
+    (parameter) => {
+      const before = last("before")?.[parameter];
+      const after = last("after")?.[parameter];
+      if (typeof before !== "number") return [];
+      const band = bandFor(parameter, row.mode, caseFile.vehicle);
+      if (!band) return [];
+      const isOut = (band.high !== null && before > band.high) || (band.low !== null && before < band.low);
+      return [
+        {
+          id: `${row.mode}-${parameter}`,
+          label:
+            caseFile.vehicle.banks === 2
+              ? PARAMETERS[parameter].label
+              : PARAMETERS[parameter].label.replace(", bank 1", ""),
+          unit: "%",
+          before,
+          after: typeof after === "number" ? after : null,
+          band,
+          family: isOut ? (before > 0 ? ("lean" as const) : ("rich" as const)) : null,
+          decimals: 1,
+          signed: true,
+          verdict: "still-inside" as const,
+        },
+      ];
+    },
+  );
 }
 
 /** "780 and 760 r/min, coolant 91 and 90 °C": that like was compared with like. */

@@ -61,7 +61,9 @@ export async function ensureBuild(env) {
   const [sources, id, record] = await Promise.all([
     sourceHash(),
     builtId(),
-    readFile(recordFile, "utf8").then(JSON.parse, () => ({})),
+    readFile(recordFile, "utf8")
+      .then(JSON.parse)
+      .catch(() => ({})),
   ]);
   if (id && record.sources === sources && record.id === id) return false;
   await step("Building the pages", () =>

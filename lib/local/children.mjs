@@ -94,7 +94,9 @@ async function endGroup(pid) {
  * @returns {Promise<number | undefined>}
  */
 export async function endLeftovers(folder) {
-  const list = await readFile(join(folder, "running.json"), "utf8").then(JSON.parse, () => undefined);
+  const list = await readFile(join(folder, "running.json"), "utf8")
+    .then(JSON.parse)
+    .catch(() => undefined);
   if (!list) return undefined;
   const isSame = async ({ pid, birth }) => birth !== undefined && (await birthOf(pid)) === birth;
   if (list.driver !== process.pid && (await isSame({ pid: list.driver, birth: list.birth }))) return list.driver;

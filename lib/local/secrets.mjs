@@ -20,7 +20,9 @@ const fresh = () => ({
 export async function secretsIn(folder) {
   const path = join(folder, "secrets.json");
   await mkdir(folder, { recursive: true });
-  const kept = await readFile(path, "utf8").then(JSON.parse, () => ({}));
+  const kept = await readFile(path, "utf8")
+    .then(JSON.parse)
+    .catch(() => ({}));
   const all = { ...fresh(), ...kept };
   const isNew = Object.keys(fresh()).some((name) => !(name in kept));
   if (isNew) await writeFile(path, `${JSON.stringify(all, null, 2)}\n`, { mode: 0o600 });

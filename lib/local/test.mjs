@@ -37,7 +37,10 @@ for (const name of ["SIGINT", "SIGTERM", "SIGHUP"]) process.on(name, () => void 
 
 whenOrphaned(() => void stop(130));
 
-const readJson = (path) => readFile(path, "utf8").then(JSON.parse, () => undefined);
+const readJson = (path) =>
+  readFile(path, "utf8")
+    .then(JSON.parse)
+    .catch(() => undefined);
 
 /** Runs a test runner that writes its counts to a file; a runner that wrote none has failed once. */
 async function counted(title, command, args, env, resultFile, count) {

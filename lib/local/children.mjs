@@ -1,6 +1,6 @@
 import { spawn } from "node:child_process";
 import { mkdirSync, openSync } from "node:fs";
-import { readFile, writeFile } from "node:fs/promises";
+import { readFile, rename, writeFile } from "node:fs/promises";
 import { join } from "node:path";
 import { root } from "./paths.mjs";
 import { birthOf, gone, signal } from "./processes.mjs";
@@ -30,10 +30,9 @@ export function childrenIn({ folder, onGivingUp }) {
         const birth = child.pid && (await birthOf(child.pid));
         if (birth) list.push({ name, pid: child.pid, birth });
       }
-      await writeFile(
-        listFile,
-        JSON.stringify({ driver: process.pid, birth: await birthOf(process.pid), children: list }),
-      );
+      const text = JSON.stringify({ driver: process.pid, birth: await birthOf(process.pid), children: list });
+      await writeFile(`${listFile}.part`, text);
+      await rename(`${listFile}.part`, listFile);
     });
     return written;
   };
@@ -63,7 +62,7 @@ export function childrenIn({ folder, onGivingUp }) {
         say(
           `  ${name} ended (${how ?? `code ${code}`}); starting it again${show ? "" : `. Its log: ${join(logs, `${name}.log`)}`}`,
         );
-        setTimeout(launch, 300 * 2 ** current.quickDeaths);
+        setTimeout(launch, Math.min(2000, 300 * 2 ** current.quickDeaths));
       });
       void writeList();
     };

@@ -28,10 +28,10 @@ export const listColumns = {
   technicianName: people.name,
 };
 
-export type ListRow = {
-  [K in keyof typeof listColumns]: (typeof listColumns)[K]["_"]["notNull"] extends true
-    ? (typeof listColumns)[K]["_"]["data"]
-    : (typeof listColumns)[K]["_"]["data"] | null;
+type Column<T> = T extends { _: { notNull: infer N; data: infer D } } ? (N extends true ? D : D | null) : never;
+/** A row of the cases list; the technician comes by a left join, so their name may be absent. */
+export type ListRow = Omit<{ [K in keyof typeof listColumns]: Column<(typeof listColumns)[K]> }, "technicianName"> & {
+  technicianName: string | null;
 };
 
 function joined(tx: Tx) {

@@ -12,6 +12,9 @@ export function healedValues(sample: Sample, vehicle: CaseVehicle): Record<strin
     if (!parameter) continue;
     if (TRIM.test(id)) healed[id] = id.startsWith("SHRT") ? 0.8 : 1.6;
     else if (id.startsWith("FUELSYS")) healed[id] = sample.mode === "accelerating" ? raw : "CL";
+    // the maker's own figure says best what a sound engine shows
+    else if (id === "fuelPressureKPa" && typeof sample.values.fuelPressureSpecKPa === "number")
+      healed[id] = sample.values.fuelPressureSpecKPa;
     else if (typeof raw === "number") healed[id] = healedNumber(id as ParameterId, raw, sample, vehicle);
     else if (typeof raw === "object" && raw !== null) healed[id] = healedCylinders(id, raw as Record<string, number>);
     else healed[id] = raw;

@@ -61,7 +61,7 @@ export function proofView(view: CaseView) {
     monitors: proof.monitors.map((each) => ({
       name: MONITOR_WORDS[each.monitor] ?? each.monitor,
       isComplete: each.state === "complete",
-      words: each.message || (STATE_WORDS[each.state] ?? each.state),
+      words: STATE_WORDS[each.state] ?? each.state,
     })),
     monitorNote: proof.monitors.some((each) => each.state === "incomplete")
       ? "Monitors that are not complete are told to the customer if an inspection is near."

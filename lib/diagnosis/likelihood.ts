@@ -11,7 +11,7 @@ import { KNOWLEDGE } from "./knowledge/index";
 import type { TrimBehaviour } from "./knowledge/shape";
 import type { Observation, TrimReading } from "./observation";
 import { TRIM_TABLE } from "./tables/trims";
-import type { CauseId, ComplaintId, TestId } from "./vocabulary";
+import { CAUSE_IDS, type CauseId, type ComplaintId, type TestId } from "./vocabulary";
 
 type Distribution = Record<string, number>;
 
@@ -46,33 +46,80 @@ function complete(base: Distribution, stated: Distribution | undefined): Distrib
   return result;
 }
 
-const testCache = new Map<string, Distribution>();
-const signCache = new Map<string, Distribution>();
+/** One test or sign, worked out for every cause: rows by cause index, columns by outcome. */
+export interface OutcomeTable {
+  outcomes: string[];
+  column: Map<string, number>;
+  /** Probabilities under an unrelated cause. */
+  base: number[];
+  rows: number[][];
+  /** Σ p·log₂p of each row: what is left to learn once the cause is known. */
+  selfInformation: number[];
+}
+
+const CAUSE_INDEX = new Map(CAUSE_IDS.map((id, i) => [id, i]));
+export const causeIndex = (cause: CauseId): number => CAUSE_INDEX.get(cause) ?? 0;
+
+function buildTable(base: Distribution, statedBy: (cause: CauseId) => Distribution | undefined): OutcomeTable {
+  const outcomes = Object.keys(base);
+  const flat = (d: Distribution) => outcomes.map((o) => d[o] ?? 0);
+  const unrelated = flat(complete(base, undefined));
+  const rows = CAUSE_IDS.map((cause) => {
+    const stated = statedBy(cause);
+    return stated ? flat(complete(base, stated)) : unrelated;
+  });
+  return {
+    outcomes,
+    column: new Map(outcomes.map((o, i) => [o, i])),
+    base: unrelated,
+    rows,
+    selfInformation: rows.map((row) => row.reduce((s, p) => s + p * Math.log2(p), 0)),
+  };
+}
+
+const testTables = new Map<TestId, OutcomeTable>();
+const signTables = new Map<SignId, OutcomeTable>();
+
+export function testTable(test: TestId): OutcomeTable {
+  let table = testTables.get(test);
+  if (!table) {
+    table = buildTable(TEST_BASE[test], (cause) => KNOWLEDGE[cause].tests?.[test]);
+    testTables.set(test, table);
+  }
+  return table;
+}
+
+export function signTable(sign: SignId): OutcomeTable {
+  let table = signTables.get(sign);
+  if (!table) {
+    table = buildTable(SIGN_BASE[sign], (cause) => KNOWLEDGE[cause].signs?.[sign]);
+    signTables.set(sign, table);
+  }
+  return table;
+}
 
 /** Outcome probabilities of a test under a cause; `null` for an unrelated cause. */
 export function testDistribution(test: TestId, cause: CauseId | null): Distribution {
-  const stated = cause === null ? undefined : KNOWLEDGE[cause].tests?.[test];
-  const key = stated ? `${test} ${cause}` : test;
-  let d = testCache.get(key);
-  if (!d) {
-    d = complete(TEST_BASE[test], stated);
-    testCache.set(key, d);
-  }
-  return d;
+  const table = testTable(test);
+  const row = cause === null ? table.base : (table.rows[causeIndex(cause)] ?? table.base);
+  return Object.fromEntries(table.outcomes.map((o, i) => [o, row[i] ?? 0]));
 }
 
-export function signDistribution(sign: SignId, cause: CauseId | null): Distribution {
-  const stated = cause === null ? undefined : KNOWLEDGE[cause].signs?.[sign];
-  const key = stated ? `${sign} ${cause}` : sign;
-  let d = signCache.get(key);
-  if (!d) {
-    d = complete(SIGN_BASE[sign], stated);
-    signCache.set(key, d);
+/** Bits by which any of the states favours a cause over an unrelated one. */
+function tableBits(table: OutcomeTable, states: readonly string[], cause: CauseId): number {
+  const row = table.rows[causeIndex(cause)] ?? table.base;
+  if (row === table.base) return 0;
+  let p = 0;
+  let q = 0;
+  for (const state of states) {
+    const k = table.column.get(state);
+    if (k === undefined) continue;
+    p += row[k] ?? 0;
+    q += table.base[k] ?? 0;
   }
-  return d;
+  return bits(p, q);
 }
 
-const among = (d: Distribution, states: readonly string[]) => states.reduce((s, k) => s + (d[k] ?? 0), 0);
 const bits = (p: number, q: number) => Math.log2(Math.max(p, FLOOR)) - Math.log2(Math.max(q, FLOOR));
 
 /** log₂ of how much likelier a rate makes something than its base, both in percent. */
@@ -86,6 +133,27 @@ export const complaintBits = (complaint: ComplaintId, cause: CauseId): number =>
 const codeBits = (family: CodeFamily, cause: CauseId): number =>
   // A stored code that the cause does not set must come from somewhere else.
   rateBits(KNOWLEDGE[cause].codes?.[family] ?? 0.6 * CODE_FAMILIES[family].base, CODE_FAMILIES[family].base);
+
+const tellingCodesCache = new Map<CauseId, [CodeFamily, number][]>();
+
+/** Codes a cause usually sets, with what their absence says in bits. */
+function tellingCodes(cause: CauseId): [CodeFamily, number][] {
+  let list = tellingCodesCache.get(cause);
+  if (!list) {
+    list = (Object.entries(KNOWLEDGE[cause].codes ?? {}) as [CodeFamily, number][]).flatMap(([family, p]) =>
+      p > 20
+        ? [
+            [family, Math.log2(1 - Math.min(p, 90) / 100) - Math.log2(1 - CODE_FAMILIES[family].base / 100)] as [
+              CodeFamily,
+              number,
+            ],
+          ]
+        : [],
+    );
+    tellingCodesCache.set(cause, list);
+  }
+  return list;
+}
 
 /* ---- trims: the pattern over modes and banks is one observation ---- */
 
@@ -178,30 +246,14 @@ export const FAITH = {
 export function observationBits(observation: Observation, cause: CauseId, trims: (cause: CauseId) => number): number {
   switch (observation.kind) {
     case "test":
-      return (
-        FAITH.test *
-        bits(
-          among(testDistribution(observation.test, cause), observation.states),
-          among(testDistribution(observation.test, null), observation.states),
-        )
-      );
+      return FAITH.test * tableBits(testTable(observation.test), observation.states, cause);
     case "sign":
-      return (
-        FAITH.sign *
-        bits(
-          among(signDistribution(observation.sign, cause), observation.states),
-          among(signDistribution(observation.sign, null), observation.states),
-        )
-      );
+      return FAITH.sign * tableBits(signTable(observation.sign), observation.states, cause);
     case "code":
       return FAITH.code * codeBits(observation.codeFamily, cause);
     case "codes-absent": {
       let sum = 0;
-      for (const family of observation.families) {
-        const p = KNOWLEDGE[cause].codes?.[family];
-        if (p !== undefined && p > 20)
-          sum += Math.log2(1 - Math.min(p, 90) / 100) - Math.log2(1 - CODE_FAMILIES[family].base / 100);
-      }
+      for (const [family, weight] of tellingCodes(cause)) if (observation.families.includes(family)) sum += weight;
       return FAITH.code * 0.5 * Math.max(sum, -3);
     }
     case "circumstance": {

@@ -2,13 +2,15 @@ import type { NextTest } from "./answer";
 import { testApplies } from "./applies";
 import type { CaseFile } from "./case-file";
 import { PROVING } from "./knowledge/proving";
-import { testDistribution } from "./likelihood";
+import { causeIndex, testTable } from "./likelihood";
 import type { Observation } from "./observation";
 import { TESTS } from "./tests";
 import { type CauseId, TEST_IDS, type TestId } from "./vocabulary";
 
 const LISTED = 8;
 const NAMED_PER_OUTCOME = 3;
+/** Below this a test tells next to nothing. */
+const LEAST_BITS = 0.002;
 /** Walking over, hooking up, writing down: no test is free. Common practice. */
 const SET_UP_MINUTES = 4;
 
@@ -42,66 +44,69 @@ export function nextTests(
 ): NextTest[] {
   const done = new Set<TestId>(caseFile.tests.map((t) => t.id));
   for (const o of observations) if (o.kind === "test") done.add(o.test);
-  const list: NextTest[] = [];
+  const indices = causes.map(causeIndex);
+  const list: { id: TestId; information: number; p: number[]; perMinute: number }[] = [];
   for (const id of TEST_IDS) {
     if (done.has(id) || !testApplies(id, caseFile.vehicle) || !(NEEDS_FIRST[id]?.(observations) ?? true)) continue;
-    const test = TESTS[id];
-    const unrelated = testDistribution(id, null);
-    const outcomes = Object.keys(unrelated);
+    const { outcomes, rows, selfInformation } = testTable(id);
     const p = outcomes.map(() => 0);
-    let information = 0;
-    const likelihoods = causes.map((cause) => testDistribution(id, cause));
-    causes.forEach((_, c) => {
-      outcomes.forEach((o, k) => {
-        p[k] = (p[k] ?? 0) + (probability[c] ?? 0) * (likelihoods[c]?.[o] ?? 0);
-      });
-    });
-    causes.forEach((_, c) => {
-      if ((probability[c] ?? 0) < 1e-9) return;
-      outcomes.forEach((o, k) => {
-        const l = likelihoods[c]?.[o] ?? 0;
-        information += (probability[c] ?? 0) * l * log2(l / (p[k] || 1));
-      });
-    });
-    const bits = Math.max(0, information);
-    list.push({
+    let given = 0;
+    for (let c = 0; c < causes.length; c++) {
+      const q = probability[c] ?? 0;
+      const index = indices[c] ?? 0;
+      const row = rows[index] as number[];
+      for (let k = 0; k < p.length; k++) p[k] = (p[k] as number) + q * (row[k] as number);
+      given += q * (selfInformation[index] as number);
+    }
+    const information = Math.max(0, given - p.reduce((s, x) => s + x * log2(x), 0));
+    if (information >= LEAST_BITS)
+      list.push({ id, information, p, perMinute: information / (TESTS[id].minutes + SET_UP_MINUTES) });
+  }
+  list.sort((a, b) => b.perMinute - a.perMinute || (a.id < b.id ? -1 : 1));
+  return list.slice(0, LISTED).map(({ id, information, p, perMinute }) => {
+    const { title, minutes, tools, cautions } = TESTS[id];
+    return {
       id,
-      title: test.title,
-      minutes: test.minutes,
-      tools: test.tools,
-      cautions: test.cautions,
-      expectedInformationBits: Number(bits.toFixed(4)),
-      bitsPerMinute: Number((bits / (test.minutes + SET_UP_MINUTES)).toFixed(5)),
-      outcomeProbability: Object.fromEntries(outcomes.map((o, k) => [o, Number((p[k] ?? 0).toFixed(4))])),
-      ifOutcome: {},
+      title,
+      minutes,
+      tools,
+      cautions,
+      expectedInformationBits: Number(information.toFixed(4)),
+      bitsPerMinute: Number(perMinute.toFixed(5)),
+      outcomeProbability: Object.fromEntries(testTable(id).outcomes.map((o, k) => [o, Number((p[k] ?? 0).toFixed(4))])),
+      ifOutcome: fork(id, causes, indices, totals),
       proves: Object.fromEntries(
         causes.flatMap((cause) => (PROVING[cause]?.[id] ? [[cause, PROVING[cause]?.[id]]] : [])),
       ),
-    });
-  }
-  list.sort((a, b) => b.bitsPerMinute - a.bitsPerMinute || (a.id < b.id ? -1 : 1));
-  const best = list.filter((t) => t.expectedInformationBits >= 0.002).slice(0, LISTED);
-  for (const test of best) test.ifOutcome = fork(test.id, causes, totals);
-  return best;
+    };
+  });
 }
 
 /** What each outcome would make of the ranking: the leading causes after it. */
-function fork(id: TestId, causes: readonly CauseId[], totals: readonly number[]): NextTest["ifOutcome"] {
-  const unrelated = testDistribution(id, null);
+function fork(
+  id: TestId,
+  causes: readonly CauseId[],
+  indices: readonly number[],
+  totals: readonly number[],
+): NextTest["ifOutcome"] {
+  const { outcomes, rows, base } = testTable(id);
+  const top = Math.max(...totals);
   const result: NextTest["ifOutcome"] = {};
-  for (const outcome of Object.keys(unrelated)) {
-    const base = unrelated[outcome] ?? 1;
-    const after = causes.map(
-      (cause, c) => (totals[c] ?? 0) + Math.log2((testDistribution(id, cause)[outcome] ?? base) / base),
+  outcomes.forEach((outcome, k) => {
+    const likelihood = indices.map(
+      (index, c) => 2 ** ((totals[c] ?? 0) - (totals[0] ?? 0)) * ((rows[index]?.[k] ?? 0) / (base[k] ?? 1)),
     );
-    const top = Math.max(...after);
-    const raw = after.map((b) => 2 ** (b - top));
-    const sum = raw.reduce((s, x) => s + x, 0);
-    const lead = raw
-      .map((x, c) => [c, x / sum] as const)
-      .sort((a, b) => b[1] - a[1] || a[0] - b[0])
-      .slice(0, NAMED_PER_OUTCOME);
-    result[outcome] = Object.fromEntries(lead.map(([c, q]) => [causes[c] as CauseId, Number(q.toFixed(4))]));
-  }
+    const sum = likelihood.reduce((s, x) => s + x, 0);
+    const lead: number[] = [];
+    for (let n = 0; n < NAMED_PER_OUTCOME; n++) {
+      let best = -1;
+      for (let c = 0; c < likelihood.length; c++)
+        if (!lead.includes(c) && (best < 0 || (likelihood[c] ?? 0) > (likelihood[best] ?? 0))) best = c;
+      if (best >= 0) lead.push(best);
+    }
+    result[outcome] = Object.fromEntries(
+      lead.map((c) => [causes[c] as CauseId, Number(((likelihood[c] ?? 0) / sum).toFixed(4))]),
+    );
+  });
   return result;
 }

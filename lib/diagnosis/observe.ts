@@ -41,8 +41,6 @@ const TEST_THEMES: Partial<Record<TestId, Theme>> = {
   compression: "compression",
   "relative-compression": "compression",
   "cylinder-leakdown": "compression",
-  "coil-swap": "misfire",
-  "spark-tester": "misfire",
   "power-balance": "misfire",
 };
 
@@ -124,7 +122,8 @@ function recordedTests(caseFile: CaseFile, note: (path: string, message: string)
       recorded: true,
       statement: `${title}: ${label.toLowerCase()}${test.cylinder ? ` (cylinder ${test.cylinder})` : ""}${test.bank ? ` (bank ${test.bank})` : ""}`,
       from: [path],
-      abnormal: sound !== undefined && !sound.includes(test.outcome),
+      // A swap has no sound outcome of its own; what moves with a part is out of the ordinary.
+      abnormal: sound ? !sound.includes(test.outcome) : test.outcome === "fault-follows" || test.outcome === "rises",
       family: null,
       theme: TEST_THEMES[test.id] ?? null,
       ...(test.bank ? { bank: test.bank } : {}),

@@ -27,9 +27,10 @@ export class Readings {
   private readonly loops: { value: string; path: string; mode: Mode; sample: number; parameter: string }[] = [];
 
   constructor(readonly caseFile: CaseFile) {
-    caseFile.samples.forEach((sample, index) => {
+    for (const index of inFixedOrder(caseFile.samples)) {
+      const sample = caseFile.samples[index] as Sample;
       if (sample.phase !== "after") this.take(sample, index, `samples[${index}].values`);
-    });
+    }
     this.takeFreezeFrames();
   }
 
@@ -68,7 +69,10 @@ export class Readings {
 
   /** What the control unit froze stands in for a mode that nobody measured. */
   private takeFreezeFrames(): void {
-    this.caseFile.codes.forEach((code, index) => {
+    const byCode = this.caseFile.codes
+      .map((code, index) => ({ code, index }))
+      .sort((a, b) => (a.code.code < b.code.code ? -1 : 1));
+    byCode.forEach(({ code, index }) => {
       if (!code.freezeFrame) return;
       const v = code.freezeFrame.values;
       const n = (id: ParameterId) => (typeof v[id] === "number" ? (v[id] as number) : undefined);
@@ -121,6 +125,21 @@ export class Readings {
   allLoops() {
     return this.loops.filter((l) => l.parameter === "FUELSYS1");
   }
+}
+
+/**
+ * Samples of one mode in an order of their own content, so that the order they were typed in decides nothing. Where a
+ * mode was measured twice, subjects that want one reading take the last of this order.
+ */
+function inFixedOrder(samples: readonly Sample[]): number[] {
+  const indices = samples.map((_, i) => i);
+  if (new Set(samples.map((s) => s.mode)).size === samples.length) return indices;
+  const key = (i: number) =>
+    JSON.stringify(Object.entries(samples[i]?.values ?? {}).sort(([a], [b]) => (a < b ? -1 : 1)));
+  const keys = indices.map(key);
+  return indices.sort((a, b) =>
+    (keys[a] as string) < (keys[b] as string) ? -1 : (keys[a] as string) > (keys[b] as string) ? 1 : a - b,
+  );
 }
 
 function push<T>(map: Map<string, T[]>, key: string, item: T): void {

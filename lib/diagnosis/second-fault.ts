@@ -4,9 +4,9 @@ import type { Observation } from "./observation";
 import type { CauseId } from "./vocabulary";
 
 /** How much better a pair must explain than its better half; one fault is the rule, two the exception. */
-const THRESHOLD_BITS = 3;
-/** Two faults at once cost this much before they explain anything: about one case in thirty. Common practice. */
-const PAIR_COST_BITS = 5;
+const THRESHOLD_BITS = 2;
+/** Two faults at once cost this much before they explain anything: about one case in sixteen. Common practice. */
+const PAIR_COST_BITS = 4;
 const CANDIDATES = 12;
 
 /**

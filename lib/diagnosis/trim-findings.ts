@@ -52,7 +52,23 @@ function usableTotals(r: Readings): Total[] {
       });
     }
   }
-  return totals;
+  return merged(totals);
+}
+
+/** A mode measured twice is one reading: the mean. */
+function merged(totals: readonly Total[]): Total[] {
+  const byPlace = new Map<string, Total[]>();
+  for (const t of totals) {
+    const place = `${t.bank} ${t.point}`;
+    byPlace.set(place, [...(byPlace.get(place) ?? []), t]);
+  }
+  return [...byPlace.values()]
+    .map((same) => ({
+      ...(same[0] as Total),
+      totalPct: same.reduce((sum, t) => sum + t.totalPct, 0) / same.length,
+      from: same.flatMap((t) => t.from),
+    }))
+    .sort((a, b) => a.bank - b.bank || a.point - b.point);
 }
 
 const signed = (n: number) => `${n > 0 ? "+" : ""}${n.toFixed(1)}`;

@@ -155,7 +155,7 @@ export const SIGN_BASE = {
   "full-load-mixture": { lean: 5, "over-rich": 3, normal: 92 },
   "rear-o2": { stuck: 3, normal: 97 },
   gas: {
-    normal: 66,
+    normal: 64,
     "rich-everywhere": 4,
     "rich-idle": 4,
     "rich-off-idle": 3,

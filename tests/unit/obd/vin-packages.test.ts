@@ -22,7 +22,13 @@ describe("the check digit against two independent packages", () => {
     let right = 0;
     for (let i = 0; i < 3000; i++) {
       let vin = "";
-      for (let k = 0; k < 17; k++) vin += k === 8 ? "0123456789X"[Math.floor(next() * 11)] : k === 9 ? "K" : letters[Math.floor(next() * letters.length)];
+      for (let k = 0; k < 17; k++)
+        vin +=
+          k === 8
+            ? "0123456789X"[Math.floor(next() * 11)]
+            : k === 9
+              ? "K"
+              : letters[Math.floor(next() * letters.length)];
       const ours = checkVin(vin).state === "valid";
       expect(ours, vin).toBe(validator.validate(vin));
       if (ours) right++;

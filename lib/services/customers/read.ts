@@ -1,6 +1,8 @@
 import "server-only";
-import { and, asc, desc, eq, gt, inArray, or, sql } from "drizzle-orm";
-import { cases, customers, samples, vehicles } from "@/db/schema";
+import { and, asc, desc, eq, gt, inArray, lt, or, sql } from "drizzle-orm";
+import type { Tx } from "@/db/client";
+import { LIST_PAGE, listColumns } from "@/db/queries/case-list";
+import { cases, customers, people, samples, vehicles } from "@/db/schema";
 import type { Ctx } from "@/lib/auth/context";
 import { notFound } from "@/lib/errors";
 import { readIn } from "../verb";
@@ -173,3 +175,82 @@ export async function readVehicle(ctx: Ctx, id: string) {
     return { ...row, visits, readings };
   });
 }
+
+export interface VisitCount {
+  visits: number;
+  last: Date | null;
+}
+
+async function countBy(
+  tx: Tx,
+  ctx: Ctx,
+  column: typeof cases.customerId | typeof cases.vehicleId,
+  ids: readonly string[],
+): Promise<Map<string, VisitCount>> {
+  if (ids.length === 0) return new Map();
+  const rows = await tx
+    .select({ id: column, visits: sql<number>`count(*)::int`, last: sql<string>`max(${cases.openedAt})` })
+    .from(cases)
+    .where(and(eq(cases.shopId, ctx.shopId), inArray(column, [...ids])))
+    .groupBy(column);
+  return new Map(rows.map(({ id, visits, last }) => [id, { visits, last: last ? new Date(last) : null }]));
+}
+
+/** How often each customer came, and when last. */
+export async function customerVisits(ctx: Ctx, ids: readonly string[]) {
+  return readIn(ctx, "case.read", (tx) => countBy(tx, ctx, cases.customerId, ids));
+}
+
+/** How often each vehicle came, and when last. */
+export async function vehicleVisits(ctx: Ctx, ids: readonly string[]) {
+  return readIn(ctx, "case.read", (tx) => countBy(tx, ctx, cases.vehicleId, ids));
+}
+
+/** Vehicles by label, plate, VIN or their customer's name. */
+export async function findVehicles(ctx: Ctx, query: string, limit = PAGE) {
+  return readIn(ctx, "case.read", async (tx) => {
+    const like = `%${literal(query.toLowerCase())}%`;
+    const plain = `%${literal(query.toUpperCase().replaceAll(/[\s-]+/g, ""))}%`;
+    const plate = `%${literal(query.toUpperCase())}%`;
+    return tx
+      .select({ vehicle: vehicles, customerName: customers.name })
+      .from(vehicles)
+      .innerJoin(customers, and(eq(customers.shopId, vehicles.shopId), eq(customers.id, vehicles.customerId)))
+      .where(
+        and(
+          eq(vehicles.shopId, ctx.shopId),
+          or(
+            sql`lower(${vehicles.label}) like ${like}`,
+            sql`${vehicles.plate} like ${plate}`,
+            sql`replace(${vehicles.plate}, ' ', '') like ${plain}`,
+            sql`${vehicles.vin} like ${plain}`,
+            sql`lower(${customers.name}) like ${like}`,
+          ),
+        ),
+      )
+      .orderBy(asc(vehicles.label), asc(vehicles.id))
+      .limit(limit);
+  });
+}
+
+/** One page of the cases of a customer or of a vehicle, newest first, as the cases list shows them. */
+export async function listHistory(ctx: Ctx, of: { customerId: string } | { vehicleId: string }, before: number | null) {
+  return readIn(ctx, "case.read", async (tx) => {
+    const conditions = [eq(cases.shopId, ctx.shopId)];
+    conditions.push("customerId" in of ? eq(cases.customerId, of.customerId) : eq(cases.vehicleId, of.vehicleId));
+    if (before) conditions.push(lt(cases.number, before));
+    const rows = await tx
+      .select({ ...listColumns, openedAt: cases.openedAt })
+      .from(cases)
+      .innerJoin(customers, and(eq(customers.shopId, cases.shopId), eq(customers.id, cases.customerId)))
+      .innerJoin(vehicles, and(eq(vehicles.shopId, cases.shopId), eq(vehicles.id, cases.vehicleId)))
+      .leftJoin(people, and(eq(people.shopId, cases.shopId), eq(people.id, cases.technicianId)))
+      .where(and(...conditions))
+      .orderBy(desc(cases.number))
+      .limit(LIST_PAGE + 1);
+    const shown = rows.slice(0, LIST_PAGE);
+    return { rows: shown, next: rows.length > LIST_PAGE ? (shown.at(-1)?.number ?? null) : null };
+  });
+}
+
+export type HistoryRow = Awaited<ReturnType<typeof listHistory>>["rows"][number];

@@ -1,4 +1,5 @@
 import { spawn } from "node:child_process";
+import { createInterface } from "node:readline";
 import { root } from "./paths.mjs";
 import { Plain } from "./say.mjs";
 
@@ -14,12 +15,12 @@ export function endRunning() {
  *
  * @param {string} command
  * @param {string[]} args
- * @param {{ env?: NodeJS.ProcessEnv, uid?: number, gid?: number, cwd?: string, input?: string, show?: boolean, signal?: AbortSignal }} [options]
- *   `show` passes the output through instead of keeping it.
+ * @param {{ env?: NodeJS.ProcessEnv, uid?: number, gid?: number, cwd?: string, input?: string, show?: boolean, onLine?: (line: string) => void }} [options]
+ *   `show` passes the output through instead of keeping it; `onLine` gets each line of standard output as it comes.
  * @throws {Plain} with the last lines of the output when the command fails
  */
 export function run(command, args, options = {}) {
-  const { input, show, ...rest } = options;
+  const { input, show, onLine, ...rest } = options;
   return new Promise((resolve, reject) => {
     // stdin is closed unless there is something to say: nothing may wait for an answer nobody can give
     const child = spawn(command, args, {
@@ -34,6 +35,7 @@ export function run(command, args, options = {}) {
       out += chunk;
       all += chunk;
     });
+    if (onLine) createInterface({ input: child.stdout }).on("line", onLine);
     child.stderr?.on("data", (chunk) => {
       all += chunk;
     });

@@ -5,7 +5,7 @@ import { ensureBuild } from "./build.mjs";
 import { childrenIn } from "./children.mjs";
 import { bin } from "./paths.mjs";
 import { run } from "./run.mjs";
-import { Plain, step } from "./say.mjs";
+import { Plain, say, step } from "./say.mjs";
 
 /** A TypeScript program, run in one process: the loader's own command would put another one in between. */
 const program = (script) => [process.execPath, ["--import", "tsx", script]];
@@ -69,7 +69,10 @@ export async function startStack({ settings: { env, webPort, standIns }, folder,
   }
   const data = async () => {
     await step("Bringing the database up to date", () => run(...program("db/migrate.ts"), { env: programEnv(env) }));
-    if (seed) await step("Filling the demo shop", () => run(...program("db/seed/run.ts"), { env: programEnv(env) }));
+    if (seed)
+      await step("Filling the demo shop", () =>
+        run(...program("db/seed/run.ts"), { env: programEnv(env), onLine: (line) => say(`    ${line}`) }),
+      );
   };
   // both must end before the caller cleans up, whichever fails
   const outcomes = await Promise.allSettled([data(), dev ? undefined : ensureBuild(env)]);

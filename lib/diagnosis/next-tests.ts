@@ -94,7 +94,7 @@ function fork(
   const result: NextTest["ifOutcome"] = {};
   outcomes.forEach((outcome, k) => {
     const likelihood = indices.map(
-      (index, c) => 2 ** ((totals[c] ?? 0) - (totals[0] ?? 0)) * ((rows[index]?.[k] ?? 0) / (base[k] ?? 1)),
+      (index, c) => 2 ** ((totals[c] ?? 0) - top) * ((rows[index]?.[k] ?? 0) / (base[k] ?? 1)),
     );
     const sum = likelihood.reduce((s, x) => s + x, 0);
     const lead: number[] = [];

@@ -11,7 +11,7 @@ import { idle } from "./findings/idle";
 import { pressures } from "./findings/pressures";
 import { quiet } from "./findings/quiet";
 import { rail } from "./findings/rail";
-import { rearSensors } from "./findings/rear-sensors";
+import { rearAgainstTrim, rearSensors } from "./findings/rear-sensors";
 import { FindingSheet } from "./findings/sheet";
 import { spark } from "./findings/spark";
 import type { Observation } from "./observation";
@@ -25,6 +25,7 @@ const SUBJECTS = [
   frontSensors,
   rearSensors,
   exhaustGas,
+  rearAgainstTrim,
   cylinders,
   fuelPressure,
   rail,

@@ -1,3 +1,4 @@
+import { judge } from "../bands";
 import type { Mode } from "../vocabulary";
 import type { FindingSheet } from "./sheet";
 
@@ -27,6 +28,23 @@ export function fuelPressure(f: FindingSheet): void {
       "fuel-supply",
       state === "high" ? "rich" : state === "in-spec" ? null : "lean",
     );
+  }
+  if (!still) {
+    // Without the maker's figure only a reading far outside what such systems hold says anything (common practice bands).
+    const bare = f.r.one("fuelPressureKPa", "idling", "raised-idle", "starting");
+    const judged = bare && judge("fuelPressureKPa", bare.value, bare.mode, f.vehicle);
+    if (bare && judged?.state === "outside" && judged.side) {
+      const state = bare.value < 10 ? "none" : judged.side;
+      f.test(
+        "fuel-pressure",
+        [state],
+        `Fuel pressure ${bare.value} kPa: ${judged.message.toLowerCase()}`,
+        [bare],
+        true,
+        "fuel-supply",
+        state === "high" ? "rich" : "lean",
+      );
+    }
   }
   const loaded = pick(["accelerating"]);
   if (loaded) {
@@ -80,7 +98,7 @@ export function fuelPressure(f: FindingSheet): void {
       `${volts.value} V at the pump${state === "good" ? "" : state === "none" ? ": no feed" : ": low"}`,
       [volts],
       state !== "good",
-      "fuel-supply",
+      null,
       state === "good" ? null : "lean",
     );
   }

@@ -40,6 +40,7 @@ export function heat(f: FindingSheet): void {
         f.test("soak-compare", ["agree"], `Temperatures agree after ${key.value} h standing`, from, false, "coolant");
     }
   }
+  if (!f.found.some((x) => x.kind === "test" && x.test === "soak-compare")) implausibleHeat(f);
   const running = f.r.all("ECT").filter((x) => x.mode !== "key-on" && x.mode !== "starting");
   const hottest = running.reduce<Reading | undefined>((a, b) => (!a || b.value > a.value ? b : a), undefined);
   const late = running.filter((x) => (f.r.beside("RUNTM", x)?.value ?? (x.mode === "idling" ? 0 : 700)) >= 600);
@@ -83,4 +84,37 @@ export function heat(f: FindingSheet): void {
   });
   if (open)
     f.sign("loop", ["open-when-warm"], "The control loop stays open on a warm engine", [open], true, null, "mech");
+}
+
+/** Readings no weather explains, without a soak: an open sensor reads −40 °C, a shorted one far above 100 °C. */
+function implausibleHeat(f: FindingSheet): void {
+  const outside = f.r.one("AAT")?.value ?? f.r.caseFile.site?.ambientC;
+  const air = f.r
+    .all("IAT")
+    .find((x) => x.value > 105 || x.value <= -38 || (outside !== undefined && x.value < outside - 18));
+  if (air) {
+    f.test(
+      "soak-compare",
+      ["intake-off"],
+      `Intake air said to be ${air.value} °C${outside === undefined ? "" : ` with ${outside} °C outside`}`,
+      [air],
+      true,
+      "coolant",
+      "mech",
+    );
+    return;
+  }
+  const cold = f.r
+    .all("ECT")
+    .find((x) => x.mode === "key-on" && (x.value <= -38 || (outside !== undefined && x.value < outside - 15)));
+  if (cold && !(outside !== undefined && outside < -25))
+    f.test(
+      "soak-compare",
+      ["coolant-cold"],
+      `Coolant said to be ${cold.value} °C, colder than the air`,
+      [cold],
+      true,
+      "coolant",
+      "rich",
+    );
 }

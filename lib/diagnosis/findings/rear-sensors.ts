@@ -1,5 +1,5 @@
 import type { Observation } from "../observation";
-import type { FindingSheet } from "./sheet";
+import { type FindingSheet, round, STEADY } from "./sheet";
 
 /** The rear sensor and, through it, the catalyst. */
 export function rearSensors(f: FindingSheet): void {
@@ -51,4 +51,42 @@ export function rearSensors(f: FindingSheet): void {
     const drop = cats[0]?.abnormal ? cats[1] : cats[0];
     f.found.splice(f.found.indexOf(drop as Observation), 1);
   }
+}
+
+/** The rear sensor as a second opinion: behind the catalyst it still tells lean from rich when the front one lies. */
+export function rearAgainstTrim(f: FindingSheet): void {
+  if (f.found.some((x) => x.kind === "sign" && x.sign === "gas-against-trim")) return;
+  for (const bank of [1, 2] as const)
+    for (const mode of STEADY) {
+      const rear = f.r.one(bank === 1 ? "O2S12" : "O2S22", mode);
+      if (!rear) continue;
+      const short = f.r.beside(bank === 1 ? "SHRTFT1" : "SHRTFT2", rear);
+      const long = f.r.beside(bank === 1 ? "LONGFT1" : "LONGFT2", rear);
+      if (!short && !long) continue;
+      const total = (short?.value ?? 0) + (long?.value ?? 0);
+      if (rear.value < 0.2 && total <= -10)
+        f.sign(
+          "gas-against-trim",
+          ["lean-yet-taking"],
+          `The rear sensor is lean (${rear.value} V) while trim takes away ${round(-total)} %`,
+          [rear, short, long],
+          true,
+          "front-o2",
+          "lean",
+          { bank },
+        );
+      else if (rear.value > 0.8 && total >= 10)
+        f.sign(
+          "gas-against-trim",
+          ["rich-yet-adding"],
+          `The rear sensor is rich (${rear.value} V) while trim adds ${round(total)} %`,
+          [rear, short, long],
+          true,
+          "front-o2",
+          "rich",
+          { bank },
+        );
+      else continue;
+      return;
+    }
 }

@@ -2,11 +2,11 @@ import { describe, expect, it } from "vitest";
 import { judgeProof, type ProofInput } from "@/lib/diagnosis/proof";
 import { caseOf, PORT_MAF } from "./helpers";
 
-const before = [
+const asFound = [
   { mode: "idling", values: { RPM: 760, ECT: 90, SHRTFT1: 14.1, LONGFT1: 10.2 } },
   { mode: "raised-idle", values: { RPM: 2500, SHRTFT1: 2.3, LONGFT1: 2.1 } },
 ];
-const after = (short: number, long: number, extra: object = {}) => [
+const repaired = (short: number, long: number, extra: object = {}) => [
   { mode: "idling", phase: "after", values: { RPM: 750, ECT: 91, SHRTFT1: short, LONGFT1: long, ...extra } },
   { mode: "raised-idle", phase: "after", values: { RPM: 2500, SHRTFT1: 1, LONGFT1: 1 } },
 ];
@@ -20,7 +20,7 @@ const prove = (file: object, rest: Partial<ProofInput> = {}) =>
 describe("proof of a repair", () => {
   it("passes when trims are back within 5 % where they were off and the code has not returned", () => {
     const result = prove(
-      { codes: [{ code: "P0171" }], samples: [...before, ...after(1.6, 0.8)] },
+      { codes: [{ code: "P0171" }], samples: [...asFound, ...repaired(1.6, 0.8)] },
       { afterCodes: [], readiness: { FUEL: "complete", CAT: "incomplete" } },
     );
     expect(result.verdict).toBe("passes");
@@ -33,31 +33,31 @@ describe("proof of a repair", () => {
     expect(result.monitors.find((m) => m.monitor === "CAT")?.message).toContain("not complete yet");
   });
   it("fails when they are not back, or a code returned", () => {
-    expect(prove({ samples: [...before, ...after(6, 3)] }).verdict).toBe("fails");
+    expect(prove({ samples: [...asFound, ...repaired(6, 3)] }).verdict).toBe("fails");
     expect(
       prove(
-        { codes: [{ code: "P0171" }], samples: [...before, ...after(1, 1)] },
+        { codes: [{ code: "P0171" }], samples: [...asFound, ...repaired(1, 1)] },
         { afterCodes: [{ code: "P0171", status: "pending" }] },
       ).verdict,
     ).toBe("fails");
   });
   it("is incomplete without readings in the modes that were off, or codes unread", () => {
-    const none = prove({ samples: before });
+    const none = prove({ samples: asFound });
     expect(none.verdict).toBe("incomplete");
     expect(none.missing[0]).toMatchObject({ what: "idling" });
     expect(none.missing.some((m) => m.what === "raised-idle")).toBe(false);
     expect(
-      prove({ codes: [{ code: "P0171" }], samples: [...before, ...after(1, 1)] }).missing.map((m) => m.what),
+      prove({ codes: [{ code: "P0171" }], samples: [...asFound, ...repaired(1, 1)] }).missing.map((m) => m.what),
     ).toEqual(["codes"]);
   });
   it("does not judge long trim alone right after clearing", () => {
-    const row = prove({ samples: [...before, ...after(4, 0, { CLR_DIST: 3 })] }).rows.find(
+    const row = prove({ samples: [...asFound, ...repaired(4, 0, { CLR_DIST: 3 })] }).rows.find(
       (r) => r.parameter === "TOTALFT" && r.mode === "idling",
     );
     expect(row?.verdict).toBe("passes");
     expect(row?.rule).toContain("restarted");
     const onlyLong = prove({
-      samples: [...before, { mode: "idling", phase: "after", values: { LONGFT1: 0, CLR_DIST: 3 } }],
+      samples: [...asFound, { mode: "idling", phase: "after", values: { LONGFT1: 0, CLR_DIST: 3 } }],
     });
     expect(onlyLong.rows.find((r) => r.parameter === "TOTALFT" && r.mode === "idling")?.verdict).toBe("incomplete");
   });

@@ -1,12 +1,14 @@
 import "server-only";
-import { and, desc, eq, gte, lt, type SQL, sql } from "drizzle-orm";
-import { audit } from "@/db/schema";
+import { and, asc, desc, eq, gte, inArray, lt, type SQL, sql } from "drizzle-orm";
+import { audit, cases, people } from "@/db/schema";
 import type { Ctx } from "@/lib/auth/context";
 import { readIn } from "../verb";
 
 export interface AuditQuery {
   entity?: string;
   actorId?: string;
+  /** "customer" or "system": entries that no one of the staff made. */
+  role?: string;
   from?: Date;
   to?: Date;
   beforeSeq?: number;
@@ -19,6 +21,7 @@ function conditionsOf(ctx: Ctx, query: AuditQuery): SQL[] {
     eq(audit.shopId, ctx.shopId),
     ...(query.entity ? [eq(audit.entity, query.entity)] : []),
     ...(query.actorId ? [eq(audit.actorId, query.actorId)] : []),
+    ...(query.role ? [eq(audit.role, query.role)] : []),
     ...(query.from ? [gte(audit.at, query.from)] : []),
     ...(query.to ? [lt(audit.at, query.to)] : []),
     ...(query.beforeSeq ? [lt(audit.seq, query.beforeSeq)] : []),
@@ -57,6 +60,40 @@ export async function readAudit(ctx: Ctx, query: AuditQuery, timeZone: string) {
     };
   });
 }
+
+export type AuditRow = typeof audit.$inferSelect;
+
+/** What entries need to be read: the numbers of their cases, the names of people, and the entries on both sides of each. */
+export async function readAuditContext(ctx: Ctx, rows: readonly AuditRow[]) {
+  return readIn(ctx, "audit.read", async (tx) => {
+    const staff = await tx
+      .select({ id: people.id, name: people.name, role: people.role, isActive: people.isActive })
+      .from(people)
+      .where(eq(people.shopId, ctx.shopId))
+      .orderBy(asc(people.name));
+    const caseIds = [...new Set(rows.flatMap((row) => (row.caseId ? [row.caseId] : [])))];
+    const numbered = caseIds.length
+      ? await tx
+          .select({ id: cases.id, number: cases.number })
+          .from(cases)
+          .where(and(eq(cases.shopId, ctx.shopId), inArray(cases.id, caseIds)))
+      : [];
+    const beside = [...new Set(rows.flatMap((row) => [row.seq - 1, row.seq + 1]))];
+    const neighbours = beside.length
+      ? await tx
+          .select({ seq: audit.seq, hash: audit.hash, previousHash: audit.previousHash })
+          .from(audit)
+          .where(and(eq(audit.shopId, ctx.shopId), inArray(audit.seq, beside)))
+      : [];
+    return {
+      staff,
+      caseNumbers: new Map(numbered.map(({ id, number }) => [id, number])),
+      neighbours: new Map(neighbours.map((entry) => [entry.seq, entry])),
+    };
+  });
+}
+
+export type AuditContext = Awaited<ReturnType<typeof readAuditContext>>;
 
 /** The chain as lines of JSON, oldest first: what an outsider needs to check it. */
 export async function exportAudit(ctx: Ctx): Promise<string> {

@@ -1,6 +1,7 @@
 import { describeCode } from "@/lib/obd/trouble-codes";
 import type { CaseFile } from "./case-file";
 import type { CauseFamily } from "./causes";
+import { quietObservation } from "./findings/quiet";
 import { SIGN_BASE, TEST_BASE } from "./knowledge/base-rates";
 import { CODE_FAMILIES, type CodeFamily, codeFamily } from "./knowledge/code-families";
 import { SOUND_OUTCOMES } from "./knowledge/proving";
@@ -145,19 +146,21 @@ function codeObservations(caseFile: CaseFile): Observation[] {
     entry.paths.push(`codes[${index}]`);
     families.set(family, entry);
   });
-  const found: Observation[] = [...families].map(([family, { codes, paths, bank, cylinder }]) => ({
-    kind: "code",
-    id: `code-${family}`,
-    codeFamily: family,
-    present: true,
-    statement: `${codes.join(", ")}: ${CODE_FAMILIES[family].says}`,
-    from: paths,
-    abnormal: true,
-    family: CODE_FAMILY_COLOURS[family] ?? null,
-    theme: CODE_THEMES[family] ?? null,
-    ...(bank && caseFile.vehicle.banks === 2 ? { bank } : {}),
-    ...(cylinder ? { cylinder } : {}),
-  }));
+  const found: Observation[] = [...families]
+    .filter(([family]) => family !== "misfire")
+    .map(([family, { codes, paths, bank, cylinder }]) => ({
+      kind: "code",
+      id: `code-${family}`,
+      codeFamily: family,
+      present: true,
+      statement: `${codes.join(", ")}: ${CODE_FAMILIES[family].says}`,
+      from: paths,
+      abnormal: true,
+      family: CODE_FAMILY_COLOURS[family] ?? null,
+      theme: CODE_THEMES[family] ?? null,
+      ...(bank && caseFile.vehicle.banks === 2 ? { bank } : {}),
+      ...(cylinder ? { cylinder } : {}),
+    }));
   // A control unit that stored something else had its monitors running: what it did not store says a little.
   if (caseFile.codes.length > 0 && (caseFile.vehicle.modelYear ?? 2000) >= 1996) {
     const absent = (Object.keys(CODE_FAMILIES) as CodeFamily[]).filter((f) => !families.has(f));
@@ -202,7 +205,10 @@ export function observe(caseFile: CaseFile): { observations: Observation[]; read
     same.bank ??= o.bank;
     same.from.push(...o.from);
   }
-  observations.push(...recorded, ...codeObservations(caseFile));
+  observations.push(...recorded);
+  const quiet = quietObservation(observations, caseFile);
+  if (quiet) observations.push(quiet);
+  observations.push(...codeObservations(caseFile));
   for (const [i, circumstance] of caseFile.circumstances.entries())
     observations.push({
       kind: "circumstance",

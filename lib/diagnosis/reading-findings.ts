@@ -9,7 +9,6 @@ import { fullLoad } from "./findings/full-load";
 import { heat } from "./findings/heat";
 import { idle } from "./findings/idle";
 import { pressures } from "./findings/pressures";
-import { quiet } from "./findings/quiet";
 import { rail } from "./findings/rail";
 import { rearAgainstTrim, rearSensors } from "./findings/rear-sensors";
 import { FindingSheet } from "./findings/sheet";
@@ -34,7 +33,6 @@ const SUBJECTS = [
   electrics,
   spark,
   camPosition,
-  quiet,
 ];
 
 /** Everything the readings say, apart from trims. */

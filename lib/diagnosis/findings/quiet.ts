@@ -1,24 +1,29 @@
-import { type FindingSheet, STEADY } from "./sheet";
+import type { CaseFile } from "../case-file";
+import type { Observation } from "../observation";
 
-/** Several subjects measured and none out of the ordinary: with a fault that runs all the time that is rare. */
-export function quiet(f: FindingSheet): void {
-  const measured = new Set(f.found.map((f) => (f.kind === "sign" ? f.sign : f.kind === "test" ? f.test : "")));
-  const trims = ["SHRTFT1", "LONGFT1"] as const;
-  const totals = STEADY.map((m) => trims.map((t) => f.r.one(t, m)?.value)).filter((p) =>
-    p.some((x) => x !== undefined),
-  );
-  const quietTrims = totals.length > 0 && totals.every((p) => Math.abs((p[0] ?? 0) + (p[1] ?? 0)) <= 6);
-  const abnormal = f.found.some((f) => f.abnormal) || (totals.length > 0 && !quietTrims);
-  const subjects = measured.size + (quietTrims ? totals.length : 0);
-  // A stored code beside nothing but healthy readings is history until it is seen again; more must then be healthy.
-  const codes = f.r.caseFile.codes.length;
-  if (!abnormal && subjects >= (codes > 0 ? 7 : 5))
-    f.sign(
-      "readings-all-quiet",
-      [subjects >= 9 && codes === 0 ? "broad" : "some"],
-      `${subjects} subjects measured, none out of the ordinary`,
-      [],
-      false,
-      null,
-    );
+/** Measured and healthy: so many subjects make a breadth worth saying. */
+const SOME = 5;
+const BROAD = 9;
+
+/**
+ * How much was measured or tested and found healthy. A fault that is there all the time rarely hides from a broad set;
+ * a stored code beside nothing but healthy readings is history until it is seen again, and then more must be healthy.
+ */
+export function quietObservation(observations: readonly Observation[], caseFile: CaseFile): Observation | null {
+  const measured = observations.filter((o) => o.kind === "trims" || o.kind === "sign" || o.kind === "test");
+  if (measured.some((o) => o.abnormal)) return null;
+  const subjects = measured.reduce((n, o) => n + (o.kind === "trims" ? o.trims.length : 1), 0);
+  const coded = caseFile.codes.length > 0 ? 1 : 0;
+  if (subjects < SOME + coded) return null;
+  return {
+    kind: "sign",
+    id: "readings-all-quiet",
+    sign: "readings-all-quiet",
+    states: [subjects >= BROAD + coded ? "broad" : "some"],
+    statement: `${subjects} readings and tests, none out of the ordinary`,
+    from: [],
+    abnormal: false,
+    family: null,
+    theme: null,
+  };
 }

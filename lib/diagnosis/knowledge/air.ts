@@ -23,7 +23,7 @@ export const AIR: KnowledgePart = {
     },
     circumstances: { cold: 22 },
     history: { "recent-work": 25 },
-    codes: { lean: 65, "idle-high": 14, idle: 3, "map-range": 2 },
+    codes: { misfire: 15, lean: 65, "idle-high": 14, idle: 3, "map-range": 2 },
     signs: {
       "idle-speed": { high: 28, low: 8 },
       "idle-vacuum": { weak: 22 },
@@ -408,7 +408,7 @@ export const AIR: KnowledgePart = {
       bucks: 8,
       "lacks-power": 6,
     },
-    codes: { "egr-high": 38, egr: 14, "egr-low": 4 },
+    codes: { misfire: 25, "egr-high": 38, egr: 14, "egr-low": 4 },
     signs: {
       "idle-speed": { low: 45, high: 2 },
       "idle-vacuum": { weak: 75 },

@@ -96,13 +96,15 @@ export const CODE_FAMILIES = {
   "reference-voltage": { base: 0.4, match: /^P(064[1-3]|065[1-3]|069[7-9])$/, says: "sensor reference voltage" },
   immobiliser: { base: 0.3, match: /^(P0513|P0633|P161[0-9]|B1600|U0167|U0426)$/, says: "immobiliser" },
   "low-tank": { base: 0.3, match: /^P(0313|046[0-4]|1250)$/, says: "fuel level" },
+  /** Present, they are read with the counters; what counts here is that none is stored. */
+  misfire: { base: 9, match: /^P03(0\d|1[0-24])$/, says: "misfire" },
   network: { base: 0.6, match: /^U0/, says: "network" },
 } as const satisfies Record<string, { base: number; match: RegExp; says: string }>;
 export type CodeFamily = keyof typeof CODE_FAMILIES;
 
 const FAMILY_IDS = Object.keys(CODE_FAMILIES) as CodeFamily[];
 
-/** The family a code belongs to, or null: misfire codes (read with the counters) and codes that say nothing here. */
+/** The family a code belongs to, or null for codes that say nothing here. */
 export function codeFamily(code: string): CodeFamily | null {
   return FAMILY_IDS.find((id) => CODE_FAMILIES[id].match.test(code)) ?? null;
 }

@@ -224,7 +224,7 @@ export const FUEL: KnowledgePart = {
       "failed-emissions-test": 6,
     },
     circumstances: { "hot-soak": 18 },
-    codes: { rich: 45, "injector-flow": 12 },
+    codes: { misfire: 30, rich: 45, "injector-flow": 12 },
     signs: {
       gas: { "rich-idle": 32, "rich-everywhere": 16, normal: 38, misfire: 8 },
       misfires: { none: 45, one: 42, two: 3, several: 6 },
@@ -257,7 +257,7 @@ export const FUEL: KnowledgePart = {
       "hard-start-cold": 5,
       "mil-flashing": 5,
     },
-    codes: { lean: 36, "injector-flow": 18 },
+    codes: { misfire: 48, lean: 36, "injector-flow": 18 },
     signs: {
       gas: { "lean-everywhere": 18, "lean-off-idle": 8, misfire: 12, normal: 55 },
       misfires: { none: 34, one: 48, two: 6, several: 9 },
@@ -289,7 +289,7 @@ export const FUEL: KnowledgePart = {
       "no-start-cranks": 5,
     },
     circumstances: { intermittent: 22 },
-    codes: { "injector-circuit": 76, lean: 14 },
+    codes: { misfire: 72, "injector-circuit": 76, lean: 14 },
     signs: {
       misfires: { none: 8, one: 76, two: 6, bank: 4, several: 5 },
       gas: { "lean-everywhere": 18, misfire: 8, normal: 55 },
@@ -478,7 +478,7 @@ export const FUEL: KnowledgePart = {
     },
     circumstances: { "after-refuelling": 52 },
     history: { misfuelled: 24 },
-    codes: { lean: 14 },
+    codes: { misfire: 32, lean: 14 },
     signs: { misfires: { none: 38, one: 3, several: 52 }, gas: { misfire: 24, "lean-everywhere": 6, normal: 52 } },
     tests: {
       "fuel-sample": { "water-or-stale": 95 },

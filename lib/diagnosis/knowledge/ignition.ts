@@ -20,6 +20,7 @@ export const IGNITION: KnowledgePart = {
       "failed-emissions-test": 6,
     },
     circumstances: { uphill: 22 },
+    codes: { misfire: 52 },
     signs: {
       misfires: { none: 22, one: 28, two: 9, several: 37, bank: 2 },
       "misfires-when": { load: 52, idle: 14 },
@@ -46,6 +47,7 @@ export const IGNITION: KnowledgePart = {
     reported: { misfires: 68, "rough-idle": 30, "mil-flashing": 16, "mil-on": 38, hesitates: 8 },
     circumstances: { wet: 48 },
     history: { "recent-work": 25 },
+    codes: { misfire: 65 },
     signs: { misfires: { none: 12, one: 62, two: 14, several: 10 }, gas: { misfire: 45, normal: 44 } },
     tests: {
       "visual-inspection": { "wet-or-oily-wells": 93 },
@@ -74,7 +76,7 @@ export const IGNITION: KnowledgePart = {
       "no-start-cranks": 1.5,
     },
     circumstances: { uphill: 25, warm: 22, wet: 10, intermittent: 22 },
-    codes: { coil: 28 },
+    codes: { misfire: 66, coil: 28 },
     signs: {
       misfires: { none: 6, one: 66, two: 11, pair: 9, several: 6, bank: 1 },
       "misfires-when": { load: 48, idle: 8 },
@@ -110,6 +112,7 @@ export const IGNITION: KnowledgePart = {
       "no-start-cranks": 4,
     },
     circumstances: { wet: 62, uphill: 16 },
+    codes: { misfire: 55 },
     signs: {
       misfires: { none: 12, one: 40, two: 12, several: 32, pair: 2 },
       "misfires-when": { load: 42, idle: 14 },
@@ -141,7 +144,7 @@ export const IGNITION: KnowledgePart = {
       "lacks-power": 4,
     },
     circumstances: { warm: 24, intermittent: 28 },
-    codes: { coil: 34, crank: 3 },
+    codes: { misfire: 25, coil: 34, crank: 3 },
     signs: { misfires: { none: 40, several: 35, pair: 5, one: 10 }, gas: { misfire: 40, normal: 48 } },
     tests: {
       "spark-tester": { "weak-or-none-all": 85, "weak-or-none-one": 5, strong: 10 },
@@ -175,6 +178,7 @@ export const IGNITION: KnowledgePart = {
       "backfires-exhaust": 4,
     },
     circumstances: { wet: 26 },
+    codes: { misfire: 45 },
     signs: { misfires: { none: 18, one: 16, two: 8, several: 55 }, gas: { misfire: 52, normal: 40 } },
     tests: {
       "dwell-check": { off: 68, "in-spec": 32 },

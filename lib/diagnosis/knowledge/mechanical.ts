@@ -19,6 +19,7 @@ export const MECHANICAL: KnowledgePart = {
       "backfires-intake": 4,
       "backfires-exhaust": 3,
     },
+    codes: { misfire: 50 },
     signs: {
       misfires: { none: 14, one: 60, two: 9, several: 12, adjacent: 4 },
       "misfires-when": { idle: 50, load: 8 },
@@ -51,7 +52,7 @@ export const MECHANICAL: KnowledgePart = {
     wear: "age",
     reported: { overheats: 62, "white-smoke": 38, "rough-idle": 22, misfires: 20, "hard-start-cold": 9, "mil-on": 15 },
     circumstances: { cold: 26 },
-    codes: { overheat: 14 },
+    codes: { misfire: 28, overheat: 14 },
     signs: {
       misfires: { none: 38, one: 28, adjacent: 24, two: 6, several: 4 },
       coolant: { hot: 52, cool: 1 },
@@ -88,7 +89,7 @@ export const MECHANICAL: KnowledgePart = {
       "poor-economy": 8,
     },
     history: { "recent-work": 38 },
-    codes: { "cam-crank": 58, cam: 12, "cam-phaser": 8, crank: 3 },
+    codes: { misfire: 24, "cam-crank": 58, cam: 12, "cam-phaser": 8, crank: 3 },
     signs: {
       "idle-vacuum": { weak: 72 },
       "full-load-breathing": { low: 52 },
@@ -125,6 +126,7 @@ export const MECHANICAL: KnowledgePart = {
       "backfires-intake": 10,
       "backfires-exhaust": 5,
     },
+    codes: { misfire: 45 },
     signs: {
       misfires: { none: 28, one: 56, two: 8, several: 8 },
       "idle-vacuum": { weak: 30 },
@@ -189,7 +191,7 @@ export const MECHANICAL: KnowledgePart = {
       "stalls-at-idle": 6,
     },
     circumstances: { cold: 64 },
-    codes: { lean: 6 },
+    codes: { misfire: 38, lean: 6 },
     signs: {
       misfires: { none: 34, one: 10, several: 50, two: 4 },
       "misfires-when": { idle: 62, load: 5 },
@@ -265,7 +267,7 @@ export const MECHANICAL: KnowledgePart = {
       "rough-idle": 9,
       "poor-economy": 16,
       "surges-at-cruise": 5,
-      "mil-on": 16,
+      "mil-on": 26,
       "stalls-at-idle": 3,
       "monitors-not-ready": 8,
       "fuel-smell": 2,
@@ -279,6 +281,7 @@ export const MECHANICAL: KnowledgePart = {
     },
     circumstances: { intermittent: 26 },
     history: { "codes-cleared": 14 },
+    codes: { lean: 5, rich: 2.5, misfire: 6 },
     signs: {
       misfires: { none: 96, one: 0.7, two: 0.3, several: 2.5 },
       gas: { normal: 94, misfire: 0.7 },

@@ -100,7 +100,7 @@ export function WaitingShares({
   return (
     <ReportCell
       title={title}
-      note="Share of open hours, by who was waited on"
+      note="Share of open hours, by whose hands the case was in, as its stage says"
       table={{
         heads: ["Week", ...rows.map((row) => row.label)],
         rows: weekLabels.map((label, week) => [label, ...rows.map((row) => percent(row.weeks[week] ?? 0))]),
@@ -137,7 +137,7 @@ export function WaitingShares({
             );
           })}
           {weekLabels.map((label, week) =>
-            week % every === 0 || week === count - 1 ? (
+            (week % every === 0 && count - 1 - week >= every / 2) || week === count - 1 ? (
               <text
                 key={label}
                 x={x(week)}
@@ -230,13 +230,14 @@ export function QuotedApproved({
   );
 }
 
-function niceTop(value: number): number {
+/** The round figure at the top of a money axis. */
+export function niceTop(value: number): number {
   const base = 10 ** Math.floor(Math.log10(value));
   return [1, 2, 5, 10].map((n) => n * base).find((n) => n >= value) ?? value;
 }
 
 /** Hours billed of hours on the clock, zero-based to 100 %. */
-export function HoursSold({ title, rows }: { title: string; rows: readonly HoursView[] }) {
+export function HoursSold({ title, note, rows }: { title: string; note: string; rows: readonly HoursView[] }) {
   const [ref, width] = useWidth(424);
   const left = 96;
   const end = width - 58;
@@ -247,7 +248,7 @@ export function HoursSold({ title, rows }: { title: string; rows: readonly Hours
   return (
     <ReportCell
       title={title}
-      note="Hours on the clock, and hours billed"
+      note={note}
       table={{
         heads: ["Who", "Billed", "On the clock", "Share"],
         rows: rows.map((row) => [
@@ -381,7 +382,7 @@ export function Comebacks({
   );
 }
 
-/** How often the proven cause was ranked first before the deciding test: one cell a case. */
+/** How often the proven cause was ranked first when it was marked: one cell a case. */
 export function Ranks({ title, ranks }: { title: string; ranks: RankView }) {
   const [ref, width] = useWidth(424);
   const all = [
@@ -400,7 +401,7 @@ export function Ranks({ title, ranks }: { title: string; ranks: RankView }) {
   return (
     <ReportCell
       title={title}
-      note={`Rank before the deciding test, one cell ${each === 1 ? "a case" : `${each} cases`}`}
+      note={`Rank when it was marked proven, one cell ${each === 1 ? "a case" : `${each} cases`}`}
       table={{
         heads: ["Rank", "Cases"],
         rows: (["first", "second", "third", "lower"] as const).map((rank) => [capitalise(rank), String(ranks[rank])]),

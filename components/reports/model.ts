@@ -39,3 +39,11 @@ export interface RankView {
   third: number;
   lower: number;
 }
+
+export interface ClosedWeekView {
+  label: string;
+  closed: number;
+  released: number;
+  invoicedMinor: number;
+  paidMinor: number;
+}

@@ -1,6 +1,7 @@
 import Link from "next/link";
 import type { ReactNode } from "react";
 import { FilterTabs, type TabView } from "@/components/ui/filter-tabs";
+import { ScrollX } from "@/components/ui/scroll-x";
 import { EmptyState } from "@/components/ui/states";
 import { AuditTable } from "./audit-table";
 import { ChainDots } from "./chain-dots";
@@ -91,10 +92,9 @@ export function AuditPage({ title, sub, days, checkedDay, entries, filter, tabs,
           <EmptyState title="No entry fits">Widen the dates, or choose anyone.</EmptyState>
         </div>
       ) : (
-        // biome-ignore lint/a11y/noNoninteractiveTabindex: it scrolls, so it must be reachable by keyboard
-        <section className="scrollx" tabIndex={0} aria-label="Entries">
+        <ScrollX label="Entries">
           <AuditTable entries={entries} />
-        </section>
+        </ScrollX>
       )}
       {more && (
         <p className="showmore">

@@ -1,5 +1,6 @@
 import Link from "next/link";
 import type { ReactNode } from "react";
+import { ScrollX } from "@/components/ui/scroll-x";
 import { EmptyState } from "@/components/ui/states";
 
 export interface CustomerRowView {
@@ -129,7 +130,7 @@ function ListPage({ title, sub, acts, more, isEmpty, emptyTitle, emptyText, chil
         </div>
         {acts && <div className="acts">{acts}</div>}
       </div>
-      {isEmpty ? <EmptyState title={emptyTitle}>{emptyText}</EmptyState> : <div className="scrollx">{children}</div>}
+      {isEmpty ? <EmptyState title={emptyTitle}>{emptyText}</EmptyState> : <ScrollX label="List">{children}</ScrollX>}
       {more && (
         <p className="showmore">
           <Link className="btn quiet" href={more.href} scroll={false}>

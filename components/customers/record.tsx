@@ -4,6 +4,7 @@ import { BandMark } from "@/components/ui/band-mark";
 import type { Band } from "@/components/ui/band-scale";
 import { cx } from "@/components/ui/cx";
 import type { Family } from "@/components/ui/family";
+import { ScrollX } from "@/components/ui/scroll-x";
 import { Words } from "@/components/ui/words";
 
 export interface VisitRowView {
@@ -64,7 +65,7 @@ export function RecordPage({ title, sub, acts, facts, visits, related, overTime 
             {visits.length === 0 ? (
               <p className="soft">None yet.</p>
             ) : (
-              <div className="scrollx">
+              <ScrollX label="Cases">
                 <table className="tbl">
                   <caption className="vh">Cases</caption>
                   <thead>
@@ -96,7 +97,7 @@ export function RecordPage({ title, sub, acts, facts, visits, related, overTime 
                     ))}
                   </tbody>
                 </table>
-              </div>
+              </ScrollX>
             )}
           </section>
           {overTime.length > 0 && <OverTime rows={overTime} />}

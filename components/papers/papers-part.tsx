@@ -3,6 +3,7 @@ import { AuditTable } from "@/components/audit/audit-table";
 import type { AuditEntryView } from "@/components/audit/model";
 import { Main } from "@/components/ui/case-frame";
 import { formatBytes, formatPrice } from "@/components/ui/format";
+import { ScrollX } from "@/components/ui/scroll-x";
 
 export interface PaperView {
   id: string;
@@ -44,7 +45,7 @@ export function PapersPart({ title, sub, papers, history, locale, acts, more, ch
         {papers.length === 0 ? (
           <p className="soft">None yet. A sent quote is the first.</p>
         ) : (
-          <div className="scrollx">
+          <ScrollX label="Papers">
             <table className="tbl">
               <caption className="vh">Papers</caption>
               <thead>
@@ -84,7 +85,7 @@ export function PapersPart({ title, sub, papers, history, locale, acts, more, ch
                 ))}
               </tbody>
             </table>
-          </div>
+          </ScrollX>
         )}
       </section>
       {children}
@@ -93,9 +94,9 @@ export function PapersPart({ title, sub, papers, history, locale, acts, more, ch
           <h2 id="history-head">History</h2>
           <span className="label">newest first</span>
         </header>
-        <div className="scrollx">
+        <ScrollX label="History">
           <AuditTable entries={history} caption="History of the case" />
-        </div>
+        </ScrollX>
         {more}
       </section>
     </Main>

@@ -5,6 +5,7 @@ import { Button, WhyOff } from "@/components/ui/button";
 import { Dialog } from "@/components/ui/dialog";
 import { TextInput } from "@/components/ui/inputs";
 import { Options } from "@/components/ui/options";
+import { ScrollX } from "@/components/ui/scroll-x";
 
 export type Role = "owner" | "writer" | "technician";
 export const ROLE_WORDS: Record<Role, string> = { owner: "owner", writer: "service writer", technician: "technician" };
@@ -54,7 +55,7 @@ export function PeoplePage({ members, invitations, onInvite, onRole, onRemove, o
           </Button>
         )}
       </div>
-      <div className="scrollx">
+      <ScrollX label="People">
         <table className="tbl">
           <caption className="vh">People</caption>
           <thead>
@@ -106,7 +107,7 @@ export function PeoplePage({ members, invitations, onInvite, onRole, onRemove, o
             ))}
           </tbody>
         </table>
-      </div>
+      </ScrollX>
       <Dialog open={isInviting} onClose={() => setInviting(false)} title="Invite someone">
         {onInvite && <InviteForm onInvite={onInvite} onDone={() => setInviting(false)} />}
       </Dialog>

@@ -53,8 +53,7 @@ export function PricesPage(props: PricesPageProps) {
       <div className="mainhead">
         <div>
           <h1>
-            {rates.filter((rate) => rate.isActive !== false).length} rates, {props.operations.length} operations,{" "}
-            {props.parts.length} parts
+            {[counted(rates, "rate"), counted(props.operations, "operation"), counted(props.parts, "part")].join(", ")}
           </h1>
           <p>
             Prices before tax. A change holds for new lines; sent quotes and cases with an agreed ceiling keep theirs.
@@ -163,4 +162,9 @@ export function PricesPage(props: PricesPageProps) {
       </section>
     </main>
   );
+}
+
+function counted(rows: readonly EditRow[], word: string): string {
+  const count = rows.filter((row) => row.isActive !== false).length;
+  return `${count} ${word}${count === 1 ? "" : "s"}`;
 }

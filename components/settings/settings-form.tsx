@@ -143,7 +143,9 @@ export function SettingsForm({ name, settings, currencies, onSave }: SettingsFor
             name="dayOpens"
             label="Opens"
             mono
-            type="time"
+            inputMode="numeric"
+            maxLength={5}
+            hint="24 hours, as 08:00"
             defaultValue={settings.dayOpens}
             disabled={off}
           />
@@ -152,7 +154,9 @@ export function SettingsForm({ name, settings, currencies, onSave }: SettingsFor
             name="dayCloses"
             label="Closes"
             mono
-            type="time"
+            inputMode="numeric"
+            maxLength={5}
+            hint="24 hours, as 08:00"
             defaultValue={settings.dayCloses}
             disabled={off}
           />

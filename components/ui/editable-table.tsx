@@ -5,6 +5,7 @@ import { Button } from "./button";
 import { cx } from "./cx";
 import { formatPrice, formatQuantity } from "./format";
 import { moneyEntry, parseMoney, parseNumber } from "./parse-entry";
+import { ScrollX } from "./scroll-x";
 import { EmptyState } from "./states";
 
 export type CellValue = string | number | boolean | null;
@@ -121,7 +122,7 @@ export function EditableTable(props: EditableTableProps) {
           {props.emptyText ?? `“${addLabel}” makes the first.`}
         </EmptyState>
       ) : (
-        <div className="scrollx">
+        <ScrollX label={caption}>
           <table className="tbl">
             <caption className="vh">{caption}</caption>
             <thead>
@@ -173,7 +174,7 @@ export function EditableTable(props: EditableTableProps) {
               )}
             </tbody>
           </table>
-        </div>
+        </ScrollX>
       )}
     </div>
   );

@@ -8,10 +8,10 @@ import {
 } from "./knowledge/base-rates";
 import { CODE_FAMILIES, type CodeFamily } from "./knowledge/code-families";
 import { KNOWLEDGE } from "./knowledge/index";
-import type { TrimBehaviour } from "./knowledge/shape";
+import { TRIM_BEHAVIOURS, type TrimBehaviour } from "./knowledge/shape";
 import type { Observation, TrimReading } from "./observation";
 import { TRIM_TABLE } from "./tables/trims";
-import { CAUSE_IDS, type CauseId, type ComplaintId, type TestId } from "./vocabulary";
+import { CAUSE_IDS, type CauseId, type Circumstance, type ComplaintId, type History, type TestId } from "./vocabulary";
 
 type Distribution = Record<string, number>;
 
@@ -130,6 +130,16 @@ export const complaintBits = (complaint: ComplaintId, cause: CauseId): number =>
   // A complaint that a cause is not known for is still brought now and then, less often than by chance.
   rateBits(KNOWLEDGE[cause].reported[complaint] ?? 0.4 * REPORTED_BASE[complaint], REPORTED_BASE[complaint]);
 
+/** When it happens and what was done before, in bits; part of what the customer says. */
+export function circumstanceBits(circumstance: Circumstance, cause: CauseId): number {
+  const base = CIRCUMSTANCE_BASE[circumstance];
+  return FAITH.circumstance * rateBits(KNOWLEDGE[cause].circumstances?.[circumstance] ?? 0.75 * base, base);
+}
+export function historyBits(history: History, cause: CauseId): number {
+  const base = HISTORY_BASE[history];
+  return FAITH.history * rateBits(KNOWLEDGE[cause].history?.[history] ?? 0.85 * base, base);
+}
+
 const codeBits = (family: CodeFamily, cause: CauseId): number =>
   // A stored code that the cause does not set must come from somewhere else.
   rateBits(KNOWLEDGE[cause].codes?.[family] ?? 0.6 * CODE_FAMILIES[family].base, CODE_FAMILIES[family].base);
@@ -203,27 +213,26 @@ export function trimLikelihood(
   return { likelihood: where.bank1 + where.bank2 + where.both, where };
 }
 
-const TRIM_CAP_BITS = 6;
+/** The best behaviour may lead the worst by this much: no pattern of trims alone proves anything. */
+const TRIM_RANGE_BITS = 9;
 
-/** The trim evidence of every behaviour against a quiet engine, computed once for a case. */
+/**
+ * The trim evidence of every behaviour against a quiet engine, computed once for a case. Trims of several modes and banks
+ * come from one engine and one learned table, so past two they are not independent: their bits shrink together.
+ */
 export function trimBits(
   metering: "maf" | "map",
   trims: readonly TrimReading[],
   banks: number,
 ): (cause: CauseId) => number {
-  const cache = new Map<TrimBehaviour, number>();
-  const of = (behaviour: TrimBehaviour) => {
-    let known = cache.get(behaviour);
-    if (known === undefined) {
-      known = Math.log2(trimLikelihood(behaviour, metering, trims, banks).likelihood);
-      cache.set(behaviour, known);
-    }
-    return known;
-  };
-  return (cause) => {
-    const raw = of(KNOWLEDGE[cause].trims ?? "quiet") - of("quiet");
-    return Math.max(-TRIM_CAP_BITS, Math.min(TRIM_CAP_BITS, raw));
-  };
+  const dependence = trims.length > 2 ? (2 / trims.length) ** 0.45 : 1;
+  const raw = new Map<TrimBehaviour, number>(
+    TRIM_BEHAVIOURS.map((b) => [b, dependence * Math.log2(trimLikelihood(b, metering, trims, banks).likelihood)]),
+  );
+  const floor = Math.max(...raw.values()) - TRIM_RANGE_BITS;
+  const of = (behaviour: TrimBehaviour) => Math.max(raw.get(behaviour) ?? floor, floor);
+  const quiet = of("quiet");
+  return (cause) => of(KNOWLEDGE[cause].trims ?? "quiet") - quiet;
 }
 
 /* ---- one observation ---- */
@@ -256,16 +265,10 @@ export function observationBits(observation: Observation, cause: CauseId, trims:
       for (const [family, weight] of tellingCodes(cause)) if (observation.families.includes(family)) sum += weight;
       return FAITH.code * 0.5 * Math.max(sum, -3);
     }
-    case "circumstance": {
-      const base = CIRCUMSTANCE_BASE[observation.circumstance];
-      return (
-        FAITH.circumstance * rateBits(KNOWLEDGE[cause].circumstances?.[observation.circumstance] ?? 0.75 * base, base)
-      );
-    }
-    case "history": {
-      const base = HISTORY_BASE[observation.history];
-      return FAITH.history * rateBits(KNOWLEDGE[cause].history?.[observation.history] ?? 0.85 * base, base);
-    }
+    case "circumstance":
+    case "history":
+      // What the customer says is weighed with the complaint, in the prior.
+      return 0;
     case "trims":
       return FAITH.trims * trims(cause);
   }

@@ -2,7 +2,7 @@ import type { ShopMemory } from "./answer";
 import { applicableCauses } from "./applies";
 import type { CaseFile, CaseVehicle } from "./case-file";
 import { KNOWLEDGE } from "./knowledge/index";
-import { complaintBits, FAITH } from "./likelihood";
+import { circumstanceBits, complaintBits, FAITH, historyBits } from "./likelihood";
 import type { CauseId, ComplaintId } from "./vocabulary";
 
 /** No cause may pass this on what the customer says alone. */
@@ -87,6 +87,12 @@ function engineFactor(id: CauseId, v: CaseVehicle): number {
   }
 }
 
+function sum<T>(items: ReadonlySet<T>, bits: (item: T) => number): number {
+  let total = 0;
+  for (const item of items) total += bits(item);
+  return total;
+}
+
 /** What the customer says, in bits. Complaints of one case describe one thing: beyond the first they count less. */
 function complaintsBits(complaints: readonly ComplaintId[], cause: CauseId): number {
   const unique = [...new Set(complaints)];
@@ -136,7 +142,8 @@ export function similarCases(memory: ShopMemory | undefined, caseFile: CaseFile)
 }
 
 /**
- * Priors over the causes the vehicle can have: how common, by fuel system, ignition, age and complaint; moved by the
+ * Priors over the causes the vehicle can have: how common, by fuel system, ignition, age, and what the customer says
+ * (complaint, when it happens, what was done before); moved by the
  * shop's own closed cases as Dirichlet counts beside a general prior of `GENERAL_PRIOR_CASES` cases.
  */
 export function priorsOf(caseFile: CaseFile, memory?: ShopMemory): PriorResult {
@@ -145,7 +152,9 @@ export function priorsOf(caseFile: CaseFile, memory?: ShopMemory): PriorResult {
     const k = KNOWLEDGE[id];
     return (
       Math.log2(k.prior * wearFactor(caseFile.vehicle, k.wear) * engineFactor(id, caseFile.vehicle)) +
-      complaintsBits(caseFile.complaints, id)
+      complaintsBits(caseFile.complaints, id) +
+      sum(new Set(caseFile.circumstances), (c) => circumstanceBits(c, id)) +
+      sum(new Set(caseFile.history), (h) => historyBits(h, id))
     );
   });
   let p = limitPeak(logs);

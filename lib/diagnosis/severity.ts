@@ -121,14 +121,38 @@ export function variants(behaviour: TrimBehaviour, metering: "maf" | "map"): Var
         ...spread([0.1, 0.1, 0.1], 0, (i) => ({ extraAirGps: each([0.18, 0.32, 0.5], i) })),
       ];
     case "injector-rich":
-      return spread(even(4), 1, (i) => ({
-        injectorFactor: each([1.15, 1.25, 1.4, 1.6], i),
-        extraFuelGps: each([0.004, 0.008, 0.012, 0.02], i),
-      }));
+      return [
+        ...spread([0.2, 0.2, 0.2, 0.2], 1, (i) => ({
+          injectorFactor: each([1.15, 1.25, 1.4, 1.6], i),
+          extraFuelGps: each([0.004, 0.008, 0.012, 0.02], i),
+        })),
+        // A set on one bank that flows too much, most where the pulse is long.
+        ...spread([0.1, 0.1], 1, (i) => ({
+          injectorFactor: each(
+            [
+              [1.04, 1.08, 1.12, 1.18],
+              [1.12, 1.13, 1.15, 1.17],
+            ],
+            i,
+          ),
+          injectorCylinders: 3,
+        })),
+      ];
     case "injector-lean":
       return [
-        ...spread([0.2, 0.25, 0.2, 0.1], 1, (i) => ({ injectorFactor: each([0.9, 0.8, 0.68, 0.5], i) })),
-        ...spread([0.15, 0.1], 0, (i) => ({ injectorFactor: each([0.92, 0.85], i), allInjectors: true })),
+        ...spread([0.18, 0.2, 0.16, 0.08], 1, (i) => ({ injectorFactor: each([0.9, 0.8, 0.68, 0.5], i) })),
+        // A bank's injectors, or its supply, clogged: short at high flow first.
+        ...spread([0.09, 0.09], 1, (i) => ({
+          injectorFactor: each(
+            [
+              [0.96, 0.93, 0.89, 0.83],
+              [0.9, 0.88, 0.86, 0.84],
+            ],
+            i,
+          ),
+          injectorCylinders: 3,
+        })),
+        ...spread([0.12, 0.08], 0, (i) => ({ injectorFactor: each([0.92, 0.85], i), injectorCylinders: 12 })),
       ];
     case "egr-open":
       return metering === "maf"
@@ -144,14 +168,14 @@ export function variants(behaviour: TrimBehaviour, metering: "maf" | "map"): Var
             inertShare: [0.01, each([0.02, 0.04, 0.08], i), each([0.02, 0.03, 0.06], i), each([0.06, 0.1, 0.16], i)],
           }));
     case "exhaust-leak":
-      return spread(even(4), 0.7, (i) => {
+      return spread(even(4), 0.85, (i) => {
         const b = each([0.07, 0.11, 0.16, 0.22], i);
         return { sensorBias: [b, 0.5 * b, 0.35 * b, 0.08 * b] };
       });
     case "sensor-lean":
-      return spread(even(5), 0.7, (i) => ({ sensorBias: flat(each([0.08, 0.13, 0.19, 0.26, 0.33], i)) }));
+      return spread(even(5), 0.9, (i) => ({ sensorBias: flat(each([0.08, 0.13, 0.19, 0.26, 0.33], i)) }));
     case "sensor-rich":
-      return spread(even(5), 0.7, (i) => ({ sensorBias: flat(-each([0.08, 0.13, 0.18, 0.23, 0.28], i)) }));
+      return spread(even(5), 0.9, (i) => ({ sensorBias: flat(-each([0.08, 0.13, 0.18, 0.23, 0.28], i)) }));
     case "ethanol-more":
       return spread([0.1, 0.15, 0.2, 0.2, 0.2, 0.15], 0, (i) => ({
         tankEthanol: each([0.22, 0.3, 0.4, 0.5, 0.65, 0.85], i),
@@ -161,14 +185,18 @@ export function variants(behaviour: TrimBehaviour, metering: "maf" | "map"): Var
       return [
         ...spread([0.2, 0.2, 0.2, 0.2], 0, (i) => ({
           injectorFactor: each([1.08, 1.17, 1.28, 1.38], i),
-          allInjectors: true,
+          injectorCylinders: 12,
         })),
-        ...spread([0.2], 0, () => ({ injectorFactor: 0.88, allInjectors: true })),
+        ...spread([0.2], 0, () => ({ injectorFactor: 0.88, injectorCylinders: 12 })),
       ];
     case "misfire-air":
       return spread([0.35, 0.25, 0.2, 0.12, 0.08], 1, (i) => ({ misfireShare: each([0, 0.06, 0.14, 0.26, 0.45], i) }));
     case "cold-enrichment":
-      return spread(even(4), 0, (i) => ({ injectorFactor: each([1.03, 1.08, 1.15, 1.24], i), allInjectors: true }));
+      // Warm-up enrichment is largest at idle and partly hidden once the loop is closed.
+      return spread(even(4), 0, (i) => {
+        const e = each([0, 0.02, 0.05, 0.12], i);
+        return { injectorFactor: [1 + e, 1 + 0.8 * e, 1 + 0.6 * e, 1 + 0.5 * e], injectorCylinders: 12 };
+      });
     case "charge-leak":
       return metering === "maf"
         ? // Air already metered escapes: the meter over-reads in effect, under boost.

@@ -54,9 +54,9 @@ export interface Fault {
   extraFuelGps?: number;
   /** Air that comes with it (purge), g/s. */
   extraAirGps?: number;
-  /** Injector flow ÷ nominal of one cylinder (number 1), or of all. */
-  injectorFactor?: number;
-  allInjectors?: boolean;
+  /** Injector flow ÷ nominal, the same everywhere or by point, of the first `injectorCylinders` cylinders (default 1). */
+  injectorFactor?: number | readonly number[];
+  injectorCylinders?: number;
   /** Share of the manifold filling that is inert exhaust, by point, and does not burn. */
   inertShare?: readonly number[];
   /** Bias of the front sensor: it reports λ + bias, by point. */
@@ -127,7 +127,8 @@ export function solvePoint(
     return even + leak * ((1 - local) / n + (i === 0 ? local : 0));
   });
   const fuel = Array.from({ length: n }, (_, i) => {
-    const factor = fault.injectorFactor !== undefined && (fault.allInjectors || i === 0) ? fault.injectorFactor : 1;
+    const flow = typeof fault.injectorFactor === "number" ? fault.injectorFactor : fault.injectorFactor?.[at];
+    const factor = i < (fault.injectorCylinders ?? 1) ? (flow ?? 1) : 1;
     return (measured / n / nominalRatio) * factor * Math.sqrt(fault.pressureRatio?.[at] ?? 1) * dose;
   });
   const extra = (fault.extraFuelGps ?? 0) / n;

@@ -40,7 +40,7 @@ export const AIR: KnowledgePart = {
       "intake-smoke": { "leak-seen": 88 },
       "enrichment-spray": { "idle-changes": 80 },
       "vacuum-gauge": { "steady-low": 42, "needle-drops": 8 },
-      "visual-inspection": { "hose-or-duct-loose": 22 },
+      "visual-inspection": { "hose-or-duct-loose": 13 },
       "throttle-clean": { "idle-recovers": 2 },
       "idle-mixture-screw": { "no-response": 60 },
       "maf-unplugged": { "runs-better": 10 },

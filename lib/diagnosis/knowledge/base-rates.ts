@@ -136,7 +136,7 @@ export const TEST_BASE: Record<TestId, Record<string, number>> = {
   "reference-voltage": { off: 1, "in-spec": 99 },
   "wiggle-heat-cold": { "fault-appears": 6, "no-change": 94 },
   "secondary-scope": { "one-high": 5, "all-high": 5, "one-low": 5, normal: 85 },
-  "soak-compare": { "coolant-cold": 1.5, "coolant-hot": 1.5, "intake-off": 2, agree: 95 },
+  "soak-compare": { "coolant-cold": 0.8, "coolant-hot": 0.8, "intake-off": 1, agree: 97.4 },
   "phaser-command": { "no-motion": 1.2, moves: 98.8 },
   "rail-sensor-compare": { off: 1, agrees: 99 },
   "road-log": { "fault-logged": 50, "nothing-found": 50 },

@@ -60,7 +60,7 @@ export const MECHANICAL: KnowledgePart = {
     },
     tests: {
       "combustion-gas-in-coolant": { positive: 88 },
-      "cooling-pressure": { leaks: 42 },
+      "cooling-pressure": { leaks: 38 },
       "cylinder-leakdown": { coolant: 62, crankcase: 3, "in-spec": 28 },
       compression: { "adjacent-low": 36, "one-low": 22, even: 38, "all-low": 1 },
       "compression-wet": { rises: 5, "no-change": 95 },

@@ -264,7 +264,7 @@ export const SENSORS: KnowledgePart = {
     codes: { overheat: 36, "ect-range": 4 },
     signs: { coolant: { hot: 84, cool: 0.5, "implausibly-cold": 0.2 }, "knock-retard": { high: 14 } },
     tests: {
-      "cooling-pressure": { leaks: 62, holds: 38 },
+      "cooling-pressure": { leaks: 66, holds: 34 },
       "combustion-gas-in-coolant": { positive: 2.5 },
       "thermostat-warm-up": { slow: 1, normal: 99 },
       "ect-resistance": { "off-curve": 2 },

@@ -20,32 +20,53 @@ const FAMILIES: Record<string, { file: string; fontWeight: number }[]> = {
   ],
 };
 
-let registered = false;
+let ready: Promise<void> | undefined;
 
-/** The library keeps fonts by process; registering once is enough. */
-export function registerFonts(): void {
-  if (registered) return;
-  registered = true;
-  for (const [family, fonts] of Object.entries(FAMILIES)) {
+/** Registers and loads the fonts; the library keeps them by process, so once is enough. */
+export function loadFonts(): Promise<void> {
+  ready ??= load();
+  return ready;
+}
+
+interface LoadedFont {
+  characterSet: number[];
+  glyphForCodePoint(codePoint: number): unknown;
+}
+
+async function load(): Promise<void> {
+  // words are not split: a part number or a name broken by the renderer could no longer be searched for
+  Font.registerHyphenationCallback((word) => splitOverlong(word));
+  for (const [name, fonts] of Object.entries(FAMILIES)) {
     for (const [suffix, ending] of [
       ["", ""],
       [" Ext", "-ext"],
     ]) {
+      const family = name + suffix;
       Font.register({
-        family: family + suffix,
+        family,
         fonts: fonts.map(({ file, fontWeight }) => ({
           src: join(process.cwd(), FOLDER, `${file}${ending}.ttf`),
           fontWeight,
         })),
       });
+      for (const { fontWeight } of fonts) {
+        await Font.load({ fontFamily: family, fontWeight });
+        nameGlyphs(Font.getFont({ fontFamily: family, fontWeight })?.data as unknown as LoadedFont);
+      }
     }
   }
-  // words are not split: a part number or a name broken by the renderer could no longer be searched for
-  Font.registerHyphenationCallback((word) => splitOverlong(word));
 }
 
-/** Only what could not fit a line at all may break, without a hyphen being added to what somebody typed. */
-const LONGEST = 34;
-function splitOverlong(word: string): string[] {
-  return word.length <= LONGEST ? [word] : (word.match(new RegExp(`.{1,${LONGEST}}`, "gu")) ?? [word]);
+/**
+ * The font library notes the character of a glyph when it first meets it, for good. Met first as a part of another glyph
+ * it has none, and every later paper of the process lacks that character ("−749,87" lost its sign); met under another
+ * character it reads as that one. So all are met here, by character, in one order.
+ */
+function nameGlyphs(font: LoadedFont): void {
+  for (const codePoint of [...font.characterSet].sort((a, b) => a - b)) font.glyphForCodePoint(codePoint);
 }
+
+/** Only what may be wider than a column can break, and nearly anywhere; nobody's name is that long. */
+const LONGEST = 22;
+const PIECE = /.{1,5}/gu;
+const splitOverlong = (word: string): string[] => (word.length <= LONGEST ? [word] : (word.match(PIECE) ?? [word]));

@@ -44,17 +44,20 @@ export function Frame({ paper, title, words, formats, children }: FrameProps) {
   );
 }
 
+/** In letters; a longer one is set smaller so that it stays on one line. */
+const LONG_TITLE = 16;
+
 function Head({ paper, title }: { paper: PaperBase; title: string }) {
   const { shop } = paper;
   const contact = [shop.registration, shop.phone, shop.email].filter(Boolean).join(" · ");
   return (
     <View style={look.spread}>
-      <View style={{ maxWidth: px(430) }}>
+      <View style={{ width: px(340) }}>
         <Lines style={look.shopName} text={shop.name} />
         <Lines style={look.small} text={[shop.address, contact].filter(Boolean).join("\n")} />
       </View>
       <View style={look.titleBlock}>
-        <Text style={look.title}>{title}</Text>
+        <Text style={title.length > LONG_TITLE ? { ...look.title, ...look.longTitle } : look.title}>{title}</Text>
         <Text style={look.number}>{paper.number}</Text>
       </View>
     </View>

@@ -46,7 +46,8 @@ export const look = {
   strong: { fontWeight: 600 },
   shopName: { fontFamily: WIDE, fontWeight: 600, ...size(17, 22), marginBottom: px(4) },
   title: { fontFamily: WIDE, fontWeight: 600, ...size(26, 30), textAlign: "right" },
-  titleBlock: { width: px(250), alignItems: "flex-end" },
+  longTitle: size(20, 26),
+  titleBlock: { width: px(320), alignItems: "flex-end" },
   number: { fontFamily: FIGURES, ...size(13, 18), marginTop: px(2), textAlign: "right" },
   facts: {
     ...row,

@@ -1,6 +1,6 @@
 import { renderToBuffer } from "@react-pdf/renderer";
 import { createElement, type FunctionComponent } from "react";
-import { registerFonts } from "./fonts";
+import { loadFonts } from "./fonts";
 import { formatsFor } from "./format";
 import type { Writing } from "./frame";
 import { Invoice } from "./invoice";
@@ -13,7 +13,7 @@ async function render<Model extends PaperBase>(
   Paper: FunctionComponent<{ paper: Model } & Writing>,
   paper: Model,
 ): Promise<Uint8Array> {
-  registerFonts();
+  await loadFonts();
   const words = wordsFor(paper.language);
   const formats = formatsFor(paper, words);
   // the component's root is a Document, which the library's types ask to see by name

@@ -31,7 +31,7 @@ async function main(): Promise<void> {
   const oneLine = longInvoice(1, 1);
   const pages = pagesOf(await renderInvoice(threePages)).length;
   if (pages !== 3) throw new Error(`the invoice has ${pages} pages, not three`);
-  const line = (style: object) =>
+  const line = (style: { fontFamily: string }) =>
     createElement(Document, null, createElement(Page, null, createElement(Text, { style }, "One line.")));
   const ms = await measured({
     "three pages": () => renderInvoice(threePages),

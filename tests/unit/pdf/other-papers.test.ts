@@ -2,7 +2,7 @@ import { describe, expect, it } from "vitest";
 import type { PaperLanguage } from "@/lib/pdf/models";
 import { renderInvoice, renderQuote, renderRelease } from "@/lib/pdf/render";
 import { invoice, quote, release } from "./papers";
-import { fontsOf, pagesOf } from "./read-pdf";
+import { extentOf, fontsOf, pagesOf } from "./read-pdf";
 
 const read = (bytes: Uint8Array) => pagesOf(bytes).join(" ").replace(/\s+/g, " ");
 
@@ -67,6 +67,18 @@ const WRITTEN: [PaperLanguage, string, string, string, string][] = [
   ["en", "en-US", "KWD", "KWD 74.987", "Invoice"],
 ];
 
+describe("papers of one process", () => {
+  // one that sets accented letters and hyphens first, then amounts below zero
+  it("lose no sign to what was rendered before them, and give the same bytes in any order", async () => {
+    const french = { language: "fr", locale: "fr-FR", currency: "EUR" } as const;
+    await renderQuote({ ...quote, ...french });
+    const first = await renderInvoice({ ...invoice, ...french });
+    expect(read(first)).toContain("Paid by card, 16:58 −749,87 €");
+    await renderRelease({ ...release, language: "es", locale: "es-ES", complaint: "Ruido al frenar\u00a0– ¿µ?" });
+    expect(Buffer.compare(await renderInvoice({ ...invoice, ...french }), first)).toBe(0);
+  });
+});
+
 describe("languages and currencies", () => {
   it.each(WRITTEN)("%s, %s, %s: %s", async (language, locale, currency, total, title) => {
     const bytes = await renderInvoice({ ...invoice, language, locale, currency });
@@ -75,6 +87,19 @@ describe("languages and currencies", () => {
     expect(text).toContain(title);
     expect(Buffer.from(bytes).toString("latin1")).toContain(`/Lang (${language})`);
     expect(fontsOf(bytes).filter((font) => !font.embedded)).toEqual([]);
+  });
+
+  it.each(["en", "es", "fr", "de"] as const)("keeps every paper inside its right margin in %s", async (language) => {
+    const locale = { en: "en-US", es: "es-ES", fr: "fr-FR", de: "de-DE" }[language];
+    const papers = [
+      renderInvoice({ ...invoice, language, locale }),
+      renderQuote({ ...quote, language, locale }),
+      renderQuote({ ...quote, language, locale, word: "quotation", paper: "Letter" }),
+      renderRelease({ ...release, language, locale }),
+    ];
+    // 56 px at 96 to the inch are 42 points
+    for (const bytes of await Promise.all(papers))
+      for (const { right, width } of extentOf(bytes)) expect(right).toBeLessThanOrEqual(width - 42 + 1);
   });
 
   it("sets names of the extended Latin alphabet", async () => {

@@ -1,4 +1,5 @@
-import { and, asc, desc, eq, isNull, sql } from "drizzle-orm";
+import { and, eq, getTableColumns, getTableName, sql } from "drizzle-orm";
+import type { PgTable } from "drizzle-orm/pg-core";
 import type { Tx } from "@/db/client";
 import * as t from "@/db/schema";
 
@@ -23,21 +24,6 @@ export type QuoteJobRow = typeof t.quoteJobs.$inferSelect;
 export type QuestionRow = typeof t.questions.$inferSelect;
 export type PaymentRow = typeof t.payments.$inferSelect;
 export type PersonRow = typeof t.people.$inferSelect;
-
-/** Papers without their bytes: lists and pages never need them. */
-export const paperColumns = {
-  id: t.papers.id,
-  caseId: t.papers.caseId,
-  kind: t.papers.kind,
-  number: t.papers.number,
-  title: t.papers.title,
-  sha256: t.papers.sha256,
-  currency: t.papers.currency,
-  totalMinor: t.papers.totalMinor,
-  issuedAt: t.papers.issuedAt,
-  issuedByName: t.papers.issuedByName,
-  bytes: sql<number>`octet_length(${t.papers.bytes})`,
-};
 
 export async function caseByNumber(tx: Tx, shopId: string, number: number): Promise<CaseRow | undefined> {
   const [row] = await tx
@@ -65,107 +51,108 @@ export async function lockCase(tx: Tx, shopId: string, id: string): Promise<Case
   return row;
 }
 
-/** Everything a case's pages and rules need, in one fixed number of queries whatever the case holds. */
+/** The tables of a case, each with the order its rows are read in. */
+const OF_CASE = {
+  stageEvents: [t.stageEvents, "at, id"],
+  authorizations: [t.authorizations, "at, id"],
+  samples: [t.samples, "position, id"],
+  codes: [t.caseCodes, "at, id"],
+  tests: [t.testOutcomes, "at, id", "undone_at is null"],
+  marks: [t.causeMarks, "at, id", "withdrawn_at is null"],
+  drafts: [t.quoteDrafts, "case_id"],
+  quoteJobs: [t.quoteJobs, "position, id"],
+  revisions: [t.quoteRevisions, "number desc"],
+  approvals: [t.approvals, "at, id"],
+  questions: [t.questions, "at, id"],
+  workJobs: [t.workJobs, "position, id"],
+  clocks: [t.clockEntries, "started_at, id"],
+  partsUsed: [t.partsUsed, "at, id"],
+  notes: [t.caseNotes, "at, id"],
+  files: [t.files, "at, id"],
+  payments: [t.payments, "at, id"],
+} as const;
+
+type OfCase = { [K in keyof typeof OF_CASE]: (typeof OF_CASE)[K][0]["$inferSelect"][] };
+
+/** A row as JSON gave it, as the table's own type has it: names in camel case, instants as dates. */
+function fromJson<T extends PgTable>(table: T, json: Record<string, unknown>): T["$inferSelect"] {
+  const row: Record<string, unknown> = {};
+  for (const [key, column] of Object.entries(getTableColumns(table))) {
+    const value = json[column.name];
+    row[key] = value !== null && value !== undefined && column.dataType === "date" ? new Date(value as string) : value;
+  }
+  return row as T["$inferSelect"];
+}
+
+const childrenSql = Object.entries(OF_CASE)
+  .map(([key, [table, order, only]]) => {
+    const where = `x.shop_id = $1 and x.case_id = $2${only ? ` and x.${only}` : ""}`;
+    return `'${key}', (select coalesce(json_agg(row_to_json(x) order by ${order}), '[]') from ${getTableName(table)} x where ${where})`;
+  })
+  .join(",\n");
+
+interface FoundPaper {
+  id: string;
+  caseId: string;
+  kind: string;
+  number: string;
+  title: string;
+  sha256: string;
+  currency: string;
+  totalMinor: number;
+  issuedAt: string;
+  issuedByName: string;
+  bytes: number;
+}
+
+type Json = Record<string, unknown>;
+
+/** One statement for the case and everything that hangs on it: a page or a verb costs one round trip, not two dozen. */
+function partsQuery(row: CaseRow) {
+  const papers = `(select coalesce(json_agg(json_build_object('id', p.id, 'caseId', p.case_id, 'kind', p.kind, 'number', p.number, 'title', p.title,
+    'sha256', p.sha256, 'currency', p.currency, 'totalMinor', p.total_minor, 'issuedAt', p.issued_at, 'issuedByName', p.issued_by_name,
+    'bytes', octet_length(p.bytes)) order by p.issued_at, p.id), '[]') from papers p where p.shop_id = $1 and p.case_id = $2)`;
+  const text = `select json_build_object(${childrenSql},
+    'papers', ${papers},
+    'people', (select coalesce(json_agg(row_to_json(x)), '[]') from people x where x.shop_id = $1),
+    'shop', (select row_to_json(x) from shops x where x.shop_id = $1),
+    'customer', (select row_to_json(x) from customers x where x.shop_id = $1 and x.id = $3),
+    'vehicle', (select row_to_json(x) from vehicles x where x.shop_id = $1 and x.id = $4),
+    'comebackOf', (select json_build_object('id', x.id, 'number', x.number, 'closedAt', x.closed_at) from cases x where x.shop_id = $1 and x.id = $5)) as parts`;
+  const values = [row.shopId, row.id, row.customerId, row.vehicleId, row.comebackOfId];
+  const chunks = text
+    .split(/(\$\d)/)
+    .map((piece) => (/^\$\d$/.test(piece) ? sql`${values[Number(piece[1]) - 1]}::text` : sql.raw(piece)));
+  return sql.join(chunks, sql.raw(""));
+}
+
+/** Everything a case's pages and rules need. */
 export async function loadCaseParts(tx: Tx, row: CaseRow) {
-  const { shopId, id: caseId } = row;
-  const of = <T extends { shopId: never; caseId: never }>(table: T) =>
-    and(eq(table.shopId, shopId), eq(table.caseId, caseId));
-  // biome-ignore lint/suspicious/noExplicitAny: `of` takes any table with the two columns
-  const own = of as any;
-  const [customer] = await tx
-    .select()
-    .from(t.customers)
-    .where(and(eq(t.customers.shopId, shopId), eq(t.customers.id, row.customerId)));
-  const [vehicle] = await tx
-    .select()
-    .from(t.vehicles)
-    .where(and(eq(t.vehicles.shopId, shopId), eq(t.vehicles.id, row.vehicleId)));
-  const [shop] = await tx.select().from(t.shops).where(eq(t.shops.shopId, shopId));
-  const people = await tx.select().from(t.people).where(eq(t.people.shopId, shopId));
-  const stageEvents = await tx
-    .select()
-    .from(t.stageEvents)
-    .where(own(t.stageEvents))
-    .orderBy(asc(t.stageEvents.at), asc(t.stageEvents.id));
-  const authorizations = await tx
-    .select()
-    .from(t.authorizations)
-    .where(own(t.authorizations))
-    .orderBy(asc(t.authorizations.at));
-  const samples = await tx
-    .select()
-    .from(t.samples)
-    .where(own(t.samples))
-    .orderBy(asc(t.samples.position), asc(t.samples.id));
-  const codes = await tx
-    .select()
-    .from(t.caseCodes)
-    .where(own(t.caseCodes))
-    .orderBy(asc(t.caseCodes.at), asc(t.caseCodes.id));
-  const tests = await tx
-    .select()
-    .from(t.testOutcomes)
-    .where(and(own(t.testOutcomes), isNull(t.testOutcomes.undoneAt)))
-    .orderBy(asc(t.testOutcomes.at), asc(t.testOutcomes.id));
-  const marks = await tx
-    .select()
-    .from(t.causeMarks)
-    .where(and(own(t.causeMarks), isNull(t.causeMarks.withdrawnAt)))
-    .orderBy(asc(t.causeMarks.at), asc(t.causeMarks.id));
-  const [draft] = await tx.select().from(t.quoteDrafts).where(own(t.quoteDrafts));
-  const quoteJobs = await tx
-    .select()
-    .from(t.quoteJobs)
-    .where(own(t.quoteJobs))
-    .orderBy(asc(t.quoteJobs.position), asc(t.quoteJobs.id));
-  const revisions = await tx
-    .select()
-    .from(t.quoteRevisions)
-    .where(own(t.quoteRevisions))
-    .orderBy(desc(t.quoteRevisions.number));
-  const approvals = await tx.select().from(t.approvals).where(own(t.approvals)).orderBy(asc(t.approvals.at));
-  const questions = await tx.select().from(t.questions).where(own(t.questions)).orderBy(asc(t.questions.at));
-  const workJobs = await tx
-    .select()
-    .from(t.workJobs)
-    .where(own(t.workJobs))
-    .orderBy(asc(t.workJobs.position), asc(t.workJobs.id));
-  const clocks = await tx
-    .select()
-    .from(t.clockEntries)
-    .where(own(t.clockEntries))
-    .orderBy(asc(t.clockEntries.startedAt));
-  const partsUsed = await tx.select().from(t.partsUsed).where(own(t.partsUsed)).orderBy(asc(t.partsUsed.at));
-  const notes = await tx.select().from(t.caseNotes).where(own(t.caseNotes)).orderBy(asc(t.caseNotes.at));
-  const files = await tx.select().from(t.files).where(own(t.files)).orderBy(asc(t.files.at));
-  const papers = await tx.select(paperColumns).from(t.papers).where(own(t.papers)).orderBy(asc(t.papers.issuedAt));
-  const payments = await tx.select().from(t.payments).where(own(t.payments)).orderBy(asc(t.payments.at));
-  const linked = row.comebackOfId ? await caseById(tx, shopId, row.comebackOfId) : undefined;
+  const answer = await tx.execute<{ parts: Record<string, Json & Json[]> }>(partsQuery(row));
+  const parts = answer.rows[0]?.parts;
+  if (!parts) throw new Error("the case's parts did not load");
+  const children = Object.fromEntries(
+    Object.entries(OF_CASE).map(([key, [table]]) => [
+      key,
+      (parts[key] ?? []).map((each: Json) => fromJson(table, each)),
+    ]),
+  ) as unknown as OfCase;
+  const { drafts, ...lists } = children;
+  const papers = (parts.papers as unknown as FoundPaper[]).map((paper) => ({
+    ...paper,
+    issuedAt: new Date(paper.issuedAt),
+  }));
+  const linked = parts.comebackOf as { id: string; number: number; closedAt: string | null } | null | undefined;
   return {
     row,
-    shop: shop!,
-    customer: customer!,
-    vehicle: vehicle!,
-    people,
-    stageEvents,
-    authorizations,
-    samples,
-    codes,
-    tests,
-    marks,
-    draft: draft ?? null,
-    quoteJobs,
-    revisions,
-    approvals,
-    questions,
-    workJobs,
-    clocks,
-    partsUsed,
-    notes,
-    files,
+    ...lists,
+    draft: drafts[0] ?? null,
     papers,
-    payments,
-    comebackOf: linked ? { number: linked.number, id: linked.id, closedAt: linked.closedAt } : null,
+    people: (parts.people as Json[]).map((each) => fromJson(t.people, each)),
+    shop: fromJson(t.shops, parts.shop as Json),
+    customer: fromJson(t.customers, parts.customer as Json),
+    vehicle: fromJson(t.vehicles, parts.vehicle as Json),
+    comebackOf: linked ? { ...linked, closedAt: linked.closedAt ? new Date(linked.closedAt) : null } : null,
   };
 }
 

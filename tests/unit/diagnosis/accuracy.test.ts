@@ -99,6 +99,15 @@ describe("expected causes", () => {
     expect(s.calibrationError).toBeLessThanOrEqual(0.05);
   });
 
+  it("leads to the right cause before any test is recorded in most cases, and then is less sure", () => {
+    const all = [...examples, ...fixtureCases("tuning")];
+    const bare = all.map((c) => ({ ...c, case: { ...(c.case as object), tests: [] } }));
+    const s = score(bare.map((c) => ({ ...c, expected: { top: c.expected.top, topThree: c.expected.topThree } })));
+    print("tuning without its recorded tests", s);
+    expect(s.first).toBeGreaterThanOrEqual(0.8);
+    expect(s.overConfident).toBeLessThanOrEqual(0.02);
+  });
+
   it("has every cause of the vocabulary in at least one case", async () => {
     const { CAUSE_IDS } = await import("@/lib/diagnosis/vocabulary");
     const seen = new Set(

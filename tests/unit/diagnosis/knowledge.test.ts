@@ -165,6 +165,86 @@ describe("what the engine model makes of trims", () => {
   });
 });
 
+describe("the trade's table of trim shapes (common practice; fixtures/checks/fuel-trim-patterns.json)", () => {
+  // Shape over idling, cruising, accelerating on each bank; the causes the table names, corrected for boost leaks and the
+  // regulator diaphragm, of which one must lead and most of the leading three must be.
+  const V6 = { ...PORT_MAF, displacementL: 3, cylinders: 6, banks: 2 };
+  const rows: [shape: string, bank1: number[], bank2: number[], causes: string[]][] = [
+    [
+      "lean, falls with flow, both banks",
+      [22, 9, 3],
+      [21, 8, 4],
+      ["intake-air-leak", "crankcase-vent-fault", "brake-booster-leak", "purge-valve-stuck-open", "air-duct-leak"],
+    ],
+    [
+      "lean, falls with flow, one bank",
+      [19, 8, 3],
+      [1, 2, 1],
+      ["intake-air-leak", "exhaust-leak-upstream", "crankcase-vent-fault"],
+    ],
+    [
+      "lean, rises with flow, both banks",
+      [4, 11, 19],
+      [5, 12, 20],
+      ["fuel-pump-weak", "fuel-filter-restricted", "maf-under-reads", "fuel-pump-circuit-fault", "air-duct-leak"],
+    ],
+    [
+      "lean, rises with flow, one bank",
+      [4, 11, 18],
+      [0, 1, 1],
+      ["injector-restricted", "ignition-coil-failing", "spark-plugs-worn"],
+    ],
+    [
+      "lean everywhere, both banks",
+      [12, 13, 12],
+      [12, 12, 13],
+      ["ethanol-content-high", "fuel-pump-weak", "maf-under-reads", "injector-restricted", "air-duct-leak"],
+    ],
+    [
+      "lean everywhere, one bank",
+      [14, 15, 14],
+      [0, 1, -1],
+      ["o2-sensor-reads-lean", "exhaust-leak-upstream", "injector-restricted", "ignition-coil-failing"],
+    ],
+    [
+      "rich, falls with flow, both banks",
+      [-18, -9, -4],
+      [-17, -8, -3],
+      ["purge-valve-stuck-open", "oil-diluted-with-fuel", "regulator-diaphragm-leak", "maf-over-reads"],
+    ],
+    [
+      "rich, falls with flow, one bank",
+      [-17, -8, -4],
+      [0, 0, 1],
+      ["injector-leaking", "o2-sensor-reads-rich", "ignition-coil-failing"],
+    ],
+    [
+      "rich, rises with flow, both banks",
+      [-4, -9, -15],
+      [-5, -10, -16],
+      ["maf-over-reads", "fuel-pressure-high", "air-filter-restricted"],
+    ],
+    [
+      "rich everywhere, both banks",
+      [-14, -13, -12],
+      [-13, -12, -13],
+      ["fuel-pressure-high", "maf-over-reads", "ect-reads-cold", "o2-sensor-reads-rich"],
+    ],
+    ["rich everywhere, one bank", [-14, -14, -13], [0, 1, 0], ["o2-sensor-reads-rich", "injector-leaking"]],
+    ["changing sign with flow", [-12, 2, 14], [-11, 3, 15], ["maf-under-reads", "fuel-pump-weak"]],
+  ];
+  it.each(rows)("%s", (_, bank1, bank2, causes) => {
+    const modes = ["idling", "cruising", "accelerating"];
+    const samples = modes.map((mode, i) => ({
+      mode,
+      values: { SHRTFT1: 0, LONGFT1: bank1[i], SHRTFT2: 0, LONGFT2: bank2[i], FUELSYS1: "CL" },
+    }));
+    const lead = assess(caseOf({ version: 1, vehicle: V6, samples })).causes.slice(0, 3);
+    expect(causes).toContain(lead[0]?.id);
+    expect(lead.filter((c) => causes.includes(c.id)).length).toBeGreaterThanOrEqual(2);
+  });
+});
+
 describe("rules of the trade", () => {
   const lead = (input: object) => assess(caseOf({ version: 1, vehicle: PORT_MAF, ...input })).causes;
   const p = (list: ReturnType<typeof lead>, id: string) => list.find((c) => c.id === id)?.probability ?? 0;

@@ -17,8 +17,15 @@ function Row({
   const weight = style === look.sumRow ? undefined : look.strong;
   return (
     <View style={style}>
-      <Text style={{ flexShrink: 1, paddingRight: px(8) }}>{label}</Text>
-      <Text style={{ ...look.figures, ...weight, ...(isGrand ? { fontSize: px(14), lineHeight: 20 / 14 } : {}) }}>
+      <Text style={{ flexGrow: 1, flexShrink: 1, flexBasis: 0, paddingRight: px(8) }}>{label}</Text>
+      <Text
+        style={{
+          ...look.figures,
+          ...weight,
+          flexShrink: 0,
+          ...(isGrand ? { fontSize: px(14), lineHeight: 20 / 14 } : {}),
+        }}
+      >
         {amount}
       </Text>
     </View>

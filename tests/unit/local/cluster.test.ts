@@ -1,11 +1,14 @@
 import { chmodSync, existsSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
 import pg from "pg";
-import { afterAll, describe, expect, it } from "vitest";
+import { afterAll, describe, expect, it, vi } from "vitest";
 import { removeCluster, startCluster } from "@/lib/local/cluster.mjs";
 import { postgresBin } from "@/lib/local/debian.mjs";
 import { gone } from "@/lib/local/processes.mjs";
 import { secretsIn } from "@/lib/local/secrets.mjs";
+
+// papers, servers and pictures take their time on a busy machine
+vi.setConfig({ testTimeout: 180_000, hookTimeout: 60_000 });
 
 const folder = mkdtempSync("/var/tmp/firedeck-cluster-");
 // as root the server runs under another account, which must be able to walk down to its data
@@ -61,5 +64,5 @@ describe.skipIf(!(await postgresBin()))("the private cluster", () => {
     const last = await start();
     expect(await ask(last.url, "select answer from kept")).toEqual([{ answer: 42 }]);
     await last.stop();
-  }, 90_000);
+  });
 });

@@ -11,6 +11,9 @@ import { birthOf } from "@/lib/local/processes.mjs";
 import { secretsIn } from "@/lib/local/secrets.mjs";
 import { settings } from "@/lib/local/settings.mjs";
 
+// papers, servers and pictures take their time on a busy machine
+vi.setConfig({ testTimeout: 180_000, hookTimeout: 60_000 });
+
 const folder = mkdtempSync(join(tmpdir(), "firedeck-local-"));
 afterAll(() => rmSync(folder, { recursive: true }));
 afterEach(() => vi.unstubAllEnvs());
@@ -119,7 +122,7 @@ describe("children", () => {
       children.start("dying", process.execPath, ["-e", "process.exit(3)"], process.env);
     });
     expect(await gaveUp).toBe("dying");
-  }, 60_000);
+  });
 
   it("ends what a killed driver left, but not a process that has its number by now", async () => {
     const place = join(folder, "left");

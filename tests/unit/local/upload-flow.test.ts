@@ -2,9 +2,12 @@ import { mkdtempSync, rmSync } from "node:fs";
 import { createServer, type Server } from "node:http";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { afterAll, beforeAll, describe, expect, it, vi } from "vitest";
 import { fileServer } from "@/lib/local/file-server";
 import { freePort } from "@/lib/local/ports.mjs";
+
+// papers, servers and pictures take their time on a busy machine
+vi.setConfig({ testTimeout: 180_000, hookTimeout: 60_000 });
 
 const folder = mkdtempSync(join(tmpdir(), "firedeck-flow-"));
 const apiKey = "sk_live_0123456789abcdef";
@@ -102,5 +105,5 @@ describe.each([
     expect(uploaded).toHaveLength(2);
     expect(reported.map(({ name, by }) => `${name} ${by}`).sort()).toEqual(["one.png bram", "two.png bram"]);
     for (const each of uploaded) expect(each.serverData).toEqual({ stored: each.key });
-  }, 20_000);
+  });
 });

@@ -1,11 +1,14 @@
 import { existsSync, mkdtempSync, rmSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { afterAll, beforeAll, describe, expect, it, vi } from "vitest";
 import { mailSink, type StoredMail } from "@/lib/local/mail-sink";
 import { mailboxServer } from "@/lib/local/mailbox";
 import { freePort } from "@/lib/local/ports.mjs";
 import { messageIdFor, smtpMailer } from "@/lib/mail/mailer";
+
+// papers, servers and pictures take their time on a busy machine
+vi.setConfig({ testTimeout: 180_000, hookTimeout: 60_000 });
 
 const folder = mkdtempSync(join(tmpdir(), "firedeck-mail-"));
 const downFile = join(folder, "down");

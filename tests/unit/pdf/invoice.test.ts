@@ -1,8 +1,11 @@
 import { createHash } from "node:crypto";
-import { describe, expect, it } from "vitest";
+import { describe, expect, it, vi } from "vitest";
 import { renderInvoice } from "@/lib/pdf/render";
 import { invoice, longInvoice } from "./papers";
 import { extentOf, fontsOf, infoOf, pagesOf } from "./read-pdf";
+
+// papers, servers and pictures take their time on a busy machine
+vi.setConfig({ testTimeout: 180_000, hookTimeout: 60_000 });
 
 const squeeze = (text: string) => text.replace(/\s+/g, " ");
 
@@ -77,7 +80,7 @@ describe("the invoice", () => {
       // a page that begins with the total alone would be the same fault
       expect(pages[withTotal]).toMatch(/Part 1\.\d+ [\s\S]*Total/);
     }
-  }, 60_000);
+  });
 
   it("never leaves the name of a job alone at the foot of a page", async () => {
     const pages = pagesOf(await renderInvoice(longInvoice(30, 2)));
@@ -93,7 +96,7 @@ describe("the invoice", () => {
     for (const job of model.jobs) for (const line of job.lines) expect(text).toContain(`${line.description} (new)`);
     expect(text).toMatch(/Before tax\s+\$6,000\.00/);
     expect(text).toMatch(/Total\s+\$6,600\.00/);
-  }, 60_000);
+  });
 
   it("keeps overlong words and many-line texts inside the margins", async () => {
     const word = "Donaudampfschifffahrtselektrizitaetenhauptbetriebswerkbauunterbeamtengesellschaft".repeat(3);

@@ -1,8 +1,11 @@
-import { describe, expect, it } from "vitest";
+import { describe, expect, it, vi } from "vitest";
 import type { PaperLanguage } from "@/lib/pdf/models";
 import { renderInvoice, renderQuote, renderRelease } from "@/lib/pdf/render";
 import { invoice, quote, release } from "./papers";
 import { extentOf, fontsOf, pagesOf } from "./read-pdf";
+
+// papers, servers and pictures take their time on a busy machine
+vi.setConfig({ testTimeout: 180_000, hookTimeout: 60_000 });
 
 const read = (bytes: Uint8Array) => pagesOf(bytes).join(" ").replace(/\s+/g, " ");
 

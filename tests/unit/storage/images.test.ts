@@ -1,7 +1,10 @@
 import sharp from "sharp";
-import { describe, expect, it } from "vitest";
+import { describe, expect, it, vi } from "vitest";
 import { processImage } from "@/lib/storage/images";
 import { sniff } from "@/lib/storage/sniff";
+
+// papers, servers and pictures take their time on a busy machine
+vi.setConfig({ testTimeout: 180_000, hookTimeout: 60_000 });
 
 const red = { r: 200, g: 30, b: 30 };
 const blue = { r: 20, g: 30, b: 200 };

@@ -4,10 +4,13 @@ import { request } from "node:http";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
 import { UTApi } from "uploadthing/server";
-import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { afterAll, beforeAll, describe, expect, it, vi } from "vitest";
 import { fileServer } from "@/lib/local/file-server";
 import { freePort } from "@/lib/local/ports.mjs";
 import { type Storage, StorageError, uploadthingStorage } from "@/lib/storage/storage";
+
+// papers, servers and pictures take their time on a busy machine
+vi.setConfig({ testTimeout: 180_000, hookTimeout: 60_000 });
 
 const folder = mkdtempSync(join(tmpdir(), "firedeck-files-"));
 const apiKey = "sk_live_0123456789abcdef";

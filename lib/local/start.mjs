@@ -69,6 +69,8 @@ async function main() {
   // claimed before the slow part, so that a second start notices
   writeFileSync(join(localDir, "running.json"), JSON.stringify(await claim()));
 
+  // an ordinary user has to fetch somebody for this: said at once, not after minutes of installing
+  if (!process.env.DATABASE_URL && process.getuid?.() !== 0) await ensureDebian(["postgresql"]);
   const secrets = await secretsIn(localDir);
   const outcomes = await Promise.allSettled([cluster(secrets), ensurePackages()]);
   const fault = outcomes.find((outcome) => outcome.status === "rejected");

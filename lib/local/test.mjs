@@ -125,12 +125,12 @@ async function main() {
   const has = (part) => asked.length === 0 || asked.includes(part);
   await mkdir(folder, { recursive: true });
   await removeLeftovers();
-  await ensurePackages();
   await ensureDebian([
     ...(has("integration") || has("e2e") ? ["postgresql"] : []),
     ...(has("e2e") ? ["chromium"] : []),
     "poppler-utils",
   ]);
+  await ensurePackages();
 
   const counts = [];
   const attempt = async (work) => {

@@ -9,8 +9,9 @@ import { Cross } from "@/components/ui/icons";
 import { Checkbox, Select, TextArea, TextInput } from "@/components/ui/inputs";
 import { Options } from "@/components/ui/options";
 import { Words } from "@/components/ui/words";
+import { lineNet, priceJob } from "@/lib/quote/job";
 import { MoneyCell, QuantityCell, TextCell } from "./cell-input";
-import { jobPrice, lineNet, markupWords } from "./line-price";
+import { markupWords } from "./line-price";
 import type {
   CatalogueChoice,
   CauseChoice,
@@ -57,7 +58,7 @@ export function JobEditor(props: JobEditorProps) {
   const { job, number, causes, others, money, rates, maySeeCost, mayPrice, errors = {}, onChange, readOnly } = props;
   const [isOpen, setOpen] = useState(false);
   const cause = causes.find((choice) => choice.id === job.causeId) ?? null;
-  const price = jobPrice(job.lines, money.tax);
+  const price = priceJob(job.lines, money.tax);
   const set = (change: Partial<QuoteJobView>) => onChange({ ...job, ...change });
   const setLine = (id: string, change: Partial<QuoteLineDraft>) =>
     set({ lines: job.lines.map((line) => (line.id === id ? { ...line, ...change } : line)) });

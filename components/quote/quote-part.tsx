@@ -11,8 +11,9 @@ import { moneyEntry, parseMoney } from "@/components/ui/parse-entry";
 import { SaveState, type SaveStateView } from "@/components/ui/save-state";
 import { ConflictView } from "@/components/ui/states";
 import { isoToZoned, zonedToIso } from "@/components/ui/zoned-time";
+import { priceJob } from "@/lib/quote/job";
 import { JobEditor } from "./job-editor";
-import { jobCost, jobPrice } from "./line-price";
+import { jobCost } from "./line-price";
 import type {
   CatalogueChoice,
   CauseChoice,
@@ -96,7 +97,7 @@ export function QuotePart(props: QuotePartProps) {
   const [isSending, setSending] = useState(false);
   const price = (minor: number) => formatPrice(minor, money.currency, money.locale);
   const jobs = editor.jobs;
-  const priced = jobs.map((job) => jobPrice(job.lines, money.tax));
+  const priced = jobs.map((job) => priceJob(job.lines, money.tax));
   const sum = (of: (index: number) => number) => priced.reduce((total, _, index) => total + of(index), 0);
   const diagnosisTax = props.diagnosis && props.snapshot.diagnosis ? props.snapshot.diagnosis.taxMinor : 0;
   const net = (props.diagnosis?.netMinor ?? 0) + sum((i) => priced[i]!.netMinor);
@@ -120,7 +121,7 @@ export function QuotePart(props: QuotePartProps) {
     () => ({
       ...props.snapshot,
       jobs: jobs.map((job) => {
-        const p = jobPrice(job.lines, money.tax);
+        const p = priceJob(job.lines, money.tax);
         return {
           ...job,
           ...p,

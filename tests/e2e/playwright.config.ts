@@ -16,5 +16,6 @@ export default defineConfig({
     viewport: { width: 1440, height: 900 },
     screenshot: "only-on-failure",
     trace: "off",
+    actionTimeout: 15_000,
   },
 });

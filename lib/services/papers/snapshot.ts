@@ -5,8 +5,9 @@ import type { InvoiceSnapshot, PaperAuthorization, PaperJob } from "@/lib/cases/
 import { AUTHORIZATION_LABELS } from "@/lib/cases/schema";
 import { OLD_PART_LABELS } from "@/lib/cases/work-schema";
 import { CAUSES } from "@/lib/diagnosis/causes";
+import { priceJob } from "@/lib/quote/job";
 import { caseFileOf, proofOf, settingsOf } from "../cases/facts";
-import { priceDiagnosis, priceJob } from "../quotes/price";
+import { priceDiagnosis, taxOf } from "../quotes/price";
 
 export interface InvoiceOptions {
   number: string;
@@ -110,7 +111,7 @@ export function invoiceSnapshot(parts: CaseParts, options: InvoiceOptions): Invo
     const agreed = parts.revisions
       .find((revision) => revision.id === job.revisionId)
       ?.snapshot.jobs.find((each) => each.id === job.quoteJobId);
-    const priced = agreed ?? { ...priceJob(job.lines, settings), lines: [] };
+    const priced = agreed ?? { ...priceJob(job.lines, taxOf(settings)), lines: [] };
     const used = parts.partsUsed.filter((part) => part.workJobId === job.id && part.oldPart !== "none");
     return {
       title: job.title,

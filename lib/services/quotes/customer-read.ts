@@ -1,8 +1,8 @@
 import "server-only";
-import { and, eq } from "drizzle-orm";
+import { and, asc, eq } from "drizzle-orm";
 import { inShop } from "@/db/client";
 import { caseById, loadCaseParts } from "@/db/queries/cases";
-import { papers } from "@/db/schema";
+import { papers, payments } from "@/db/schema";
 import type { Ctx } from "@/lib/auth/context";
 import type { InvoiceSnapshot } from "@/lib/cases/paper-schema";
 import type { RevisionSnapshot } from "@/lib/cases/quote-schema";
@@ -125,30 +125,29 @@ async function quoteNumber(
   return revision ? `${row.number}-${revision.number}` : null;
 }
 
-export async function readCustomerInvoice(
-  ctx: Ctx,
-): Promise<{ snapshot: InvoiceSnapshot; kind: string; paidMinor: number; issuedAt: string }> {
+export interface CustomerInvoice {
+  snapshot: InvoiceSnapshot;
+  paidMinor: number;
+  payments: { how: string; at: string; amountMinor: number }[];
+}
+
+export async function readCustomerInvoice(ctx: Ctx): Promise<CustomerInvoice> {
   const link = ctx.link;
   if (link?.kind !== "invoice") throw notFound("The invoice");
   return inShop(
     ctx,
     async (tx) => {
-      const row = await caseById(tx, ctx.shopId, link.caseId);
-      if (!row) throw notFound("The invoice");
+      const ofPaper = and(eq(payments.shopId, ctx.shopId), eq(payments.paperId, link.targetId));
       const [paper] = await tx
-        .select()
+        .select({ snapshot: papers.snapshot })
         .from(papers)
         .where(and(eq(papers.shopId, ctx.shopId), eq(papers.id, link.targetId)));
       if (!paper) throw notFound("The invoice");
-      const parts = await loadCaseParts(tx, row);
-      const paidMinor = parts.payments
-        .filter((each) => each.paperId === paper.id)
-        .reduce((sum, each) => sum + each.amountMinor, 0);
+      const paid = await tx.select().from(payments).where(ofPaper).orderBy(asc(payments.at));
       return {
         snapshot: paper.snapshot as InvoiceSnapshot,
-        kind: paper.kind,
-        paidMinor,
-        issuedAt: paper.issuedAt.toISOString(),
+        paidMinor: paid.reduce((sum, each) => sum + each.amountMinor, 0),
+        payments: paid.map(({ how, at, amountMinor }) => ({ how, at: at.toISOString(), amountMinor })),
       };
     },
     { readOnly: true },

@@ -2,8 +2,9 @@ import "server-only";
 import type { CaseParts } from "@/db/queries/cases";
 import { customerReadings } from "@/lib/cases/customer-readings";
 import type { RevisionJob, RevisionSnapshot, Urgency } from "@/lib/cases/quote-schema";
+import { priceJob } from "@/lib/quote/job";
 import { caseFileOf, settingsOf } from "../cases/facts";
-import { priceDiagnosis, priceJob } from "./price";
+import { priceDiagnosis, taxOf } from "./price";
 
 export interface SnapshotOptions {
   number: number;
@@ -31,7 +32,7 @@ export function snapshotOf(parts: CaseParts, { number, now, expiresAt }: Snapsho
   const agreedJobs = parts.workJobs.filter((job) => job.state !== "struck");
   const asked = parts.quoteJobs.filter((job) => !parts.workJobs.some((work) => work.quoteJobId === job.id));
   const jobs: RevisionJob[] = asked.map((job) => {
-    const priced = priceJob(job.lines, settings);
+    const priced = priceJob(job.lines, taxOf(settings));
     return {
       id: job.id,
       causeId: job.causeId,

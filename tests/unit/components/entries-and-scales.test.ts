@@ -4,11 +4,11 @@ import { bitsScale, netBits } from "@/components/ledger/bits-scale";
 import { timesWords } from "@/components/ledger/causes-ledger";
 import type { LedgerCauseView } from "@/components/ledger/model";
 import { outsidePath, stretch, tracePath } from "@/components/log/trace";
-import { jobPrice } from "@/components/quote/line-price";
 import { bandScale, markSense } from "@/components/ui/band-scale";
 import { formatNumber, formatPrice, formatShare, formatSpan, formatWhen } from "@/components/ui/format";
 import { moneyEntry, parseMoney, parseNumber } from "@/components/ui/parse-entry";
 import { isoToZoned, zonedToIso } from "@/components/ui/zoned-time";
+import { priceJob } from "@/lib/quote/job";
 
 describe("what is typed", () => {
   it.each([
@@ -171,19 +171,19 @@ describe("a job's price while it is typed", () => {
       line("part", 4000, 680),
       line("fee", 1000, 800),
     ];
-    expect(jobPrice(lines, tax)).toEqual({ netMinor: 44020, taxMinor: 4402, totalMinor: 48422 });
+    expect(priceJob(lines, tax)).toMatchObject({ netMinor: 44020, taxMinor: 4402, totalMinor: 48422 });
   });
 
   it("rounds half upwards, by line or over the sum as the shop has set", () => {
     // Two lines of 0.05 at 10 %: by line 0.005 each goes up to 0.01, together 0.02; over the sum 0.01.
     const lines = [line("part", 1000, 5), line("part", 1000, 5)];
-    expect(jobPrice(lines, { ...tax, rounding: "line-then-sum" }).taxMinor).toBe(2);
-    expect(jobPrice(lines, tax).taxMinor).toBe(1);
+    expect(priceJob(lines, { ...tax, rounding: "line-then-sum" }).taxMinor).toBe(2);
+    expect(priceJob(lines, tax).taxMinor).toBe(1);
   });
 
   it("leaves untaxed kinds untaxed", () => {
     expect(
-      jobPrice([line("labour", 1000, 10000), line("part", 1000, 1000)], { ...tax, kinds: ["part"] }).taxMinor,
+      priceJob([line("labour", 1000, 10000), line("part", 1000, 1000)], { ...tax, kinds: ["part"] }).taxMinor,
     ).toBe(100);
   });
 });

@@ -2,8 +2,9 @@ import type { Metadata } from "next";
 import { formatPrice } from "@/components/ui/format";
 import { mayDo } from "@/lib/auth/permissions";
 import { isOver, type Stage } from "@/lib/cases/stages";
+import { netWithin } from "@/lib/quote/job";
 import { readPriceList } from "@/lib/services/cases/read";
-import { netWithin } from "@/lib/services/quotes/price";
+import { taxOf } from "@/lib/services/quotes/price";
 import { snapshotOf } from "@/lib/services/quotes/snapshot";
 import { QuoteClient } from "../_client/quote-client";
 import { CaseShell } from "../_views/case-shell";
@@ -66,7 +67,7 @@ export default async function QuotePage({ params }: PartParams) {
         diagnosis={
           price && ceilingMinor !== null
             ? {
-                words: `Diagnosis, agreed at intake up to ${money(netWithin(ceilingMinor, "diagnosis", settings))}, ${money(ceilingMinor)} with tax`,
+                words: `Diagnosis, agreed at intake up to ${money(netWithin(ceilingMinor, "diagnosis", taxOf(settings)))}, ${money(ceilingMinor)} with tax`,
                 hoursMilli: price.hoursMilli,
                 netMinor: price.netMinor,
               }

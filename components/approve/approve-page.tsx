@@ -37,7 +37,7 @@ export function ApprovePage({
     <CustomerFrame snapshot={snapshot}>
       <AnswerLive snapshot={snapshot} formId={FORM_ID} keepKey={`fd-answers-${keepKey}`}>
         <OfflineNotice />
-        <main className="cust" id="main">
+        <main className="custmain" id="main">
           <div className="tell">
             <p className="for">
               For {snapshot.customer.name}. {vehicleWords(snapshot)}

@@ -15,7 +15,7 @@ export function DonePage({ done }: { done: DoneView }) {
         : `You agreed to ${countWord(yes.length)} jobs`;
   return (
     <CustomerFrame snapshot={snapshot}>
-      <main className="cust done" id="main">
+      <main className="custmain done" id="main">
         <div className="tell">
           <p className="for">{vehicleWords(snapshot)}</p>
           <h1>{title}</h1>

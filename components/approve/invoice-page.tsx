@@ -29,7 +29,7 @@ export function InvoicePage({ invoice, pdfHref, paidMinor, payments, payAction, 
   const pairs = before.flatMap((reading, index) => (after[index] ? [reading, after[index]] : [reading]));
   return (
     <CustomerFrame snapshot={invoice}>
-      <main className="cust" id="main">
+      <main className="custmain" id="main">
         <div className="tell">
           <p className="for">
             Invoice {invoice.number}, {formatDate(invoice.issuedAt, invoice.timeZone)}. {invoice.vehicle.label}

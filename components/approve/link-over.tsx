@@ -28,7 +28,7 @@ const WORDS: Record<LinkOverProps["why"], { title: string; text: string }> = {
 export function LinkOver({ why, shop }: LinkOverProps) {
   const { title, text } = WORDS[why];
   const body = (
-    <main className="cust over" id="main">
+    <main className="custmain over" id="main">
       <div className="tell">
         <h1>{title}</h1>
         <p className="lede">{text}</p>

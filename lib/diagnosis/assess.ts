@@ -4,7 +4,7 @@ import type { CaseFile } from "./case-file";
 import { CAUSES } from "./causes";
 import { cautionsFor } from "./cautions";
 import { observationBits, trimBits } from "./likelihood";
-import { locate } from "./location";
+import { locator } from "./location";
 import { nextTests } from "./next-tests";
 import type { Observation } from "./observation";
 import { observe } from "./observe";
@@ -22,9 +22,8 @@ export interface AssessOptions {
   bands?: readonly BandRow[];
 }
 
-/** Stated to this many decimals, and probabilities follow from what is stated. */
-const STATED_DECIMALS = 4;
-const stated = (bits: number) => Number(bits.toFixed(STATED_DECIMALS));
+/** Stated to four decimals, and probabilities follow from what is stated. */
+const stated = (bits: number) => Math.round(bits * 1e4) / 1e4;
 
 /** Weights in bits by cause for every observation, rows in the order of `observations`. */
 export function weigh(
@@ -61,18 +60,22 @@ export function assess(caseFile: CaseFile, options: AssessOptions = {}): Assessm
   const probability = normalize(totals);
 
   const order = causes.map((_, i) => i).sort((a, b) => (probability[b] ?? 0) - (probability[a] ?? 0) || a - b);
+  const locate = locator(observations, caseFile);
   const assessed: AssessedCause[] = order.map((c) => {
     const id = causes[c] as CauseId;
-    const evidence = observations
-      .flatMap((o, i) => ((weights[i]?.[c] ?? 0) === 0 ? [] : [{ finding: o.id, weight: weights[i]?.[c] ?? 0 }]))
-      .sort((a, b) => Math.abs(b.weight) - Math.abs(a.weight));
+    const evidence: AssessedCause["evidence"] = [];
+    for (let i = 0; i < observations.length; i++) {
+      const weight = weights[i]?.[c] ?? 0;
+      if (weight !== 0) evidence.push({ finding: (observations[i] as Observation).id, weight });
+    }
+    evidence.sort((a, b) => Math.abs(b.weight) - Math.abs(a.weight));
     return {
       id,
       title: CAUSES[id].title,
       family: CAUSES[id].family,
       probability: probability[c] ?? 0,
       priorBits: priorBits[c] ?? 0,
-      location: locate(id, observations, caseFile),
+      location: locate(id),
       evidence,
     };
   });
@@ -92,7 +95,7 @@ export function assess(caseFile: CaseFile, options: AssessOptions = {}): Assessm
     findings,
     causes: assessed,
     unexplained,
-    nextTests: nextTests(caseFile, observations, causes, totals, probability),
+    nextTests: nextTests(caseFile, observations, causes, probability),
     cautions: cautionsFor(caseFile, observations),
     dataQuality: [...readings.notes].sort((a, b) =>
       a.path < b.path ? -1 : a.path > b.path ? 1 : a.message < b.message ? -1 : 1,

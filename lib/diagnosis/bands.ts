@@ -147,6 +147,19 @@ export function missingPart(parameter: ParameterId, vehicle: CaseVehicle): strin
   return null;
 }
 
+/** Why a reading cannot be used: outside what its sensor can state, or of a part the vehicle lacks; null when it can. */
+export function unusableReason(parameter: ParameterId, value: number, vehicle: CaseVehicle): string | null {
+  const absent = missingPart(parameter, vehicle);
+  if (absent) return absent;
+  const { possible, unit, label } = PARAMETERS[parameter];
+  if (Number.isFinite(value) && (!possible || (value >= possible.min && value <= possible.max))) return null;
+  const suffix = unit ? ` ${unit}` : "";
+  if (!possible) return `${label} must be a finite number`;
+  return value > possible.max
+    ? `This sensor's range ends at ${trim(possible.max)}${suffix}`
+    : `This sensor's range starts at ${trim(possible.min)}${suffix}`;
+}
+
 /**
  * Judges one reading in its internal unit. Cylinder readings are judged one cylinder at a time.
  * `impossible`: outside what the sensor can state, or of a part the vehicle lacks; kept, but not used.
@@ -159,29 +172,20 @@ export function judge(
   bands: readonly BandRow[] = DEFAULT_BANDS,
   site?: CaseFile["site"],
 ): Judgement {
-  const { possible, unit, label } = PARAMETERS[parameter];
+  const { possible, unit } = PARAMETERS[parameter];
   const found = resolve(parameter, mode, vehicle, bands, site);
   const band = found?.band ?? null;
-  const suffix = unit ? ` ${unit}` : "";
-  const absent = missingPart(parameter, vehicle);
-  if (absent) return { state: "impossible", family: null, band, side: null, message: absent };
-  if (!Number.isFinite(value) || (possible && (value < possible.min || value > possible.max))) {
-    const high = possible !== null && value > possible.max;
-    const message =
-      possible === null
-        ? `${label} must be a finite number`
-        : high
-          ? `This sensor's range ends at ${trim(possible.max)}${suffix}`
-          : `This sensor's range starts at ${trim(possible.min)}${suffix}`;
-    const likely = Number.isFinite(value)
-      ? likelyMeant(parameter, value, band ?? { low: possible?.min ?? null, high: possible?.max ?? null })
-      : undefined;
+  const reason = unusableReason(parameter, value, vehicle);
+  if (reason !== null) {
+    const outOfRange = possible !== null && (value < possible.min || value > possible.max);
+    if (!outOfRange) return { state: "impossible", family: null, band, side: null, message: reason };
+    const likely = likelyMeant(parameter, value, band ?? { low: possible.min, high: possible.max });
     return {
       state: "impossible",
       family: null,
       band,
-      side: high ? "high" : "low",
-      message,
+      side: value > possible.max ? "high" : "low",
+      message: reason,
       ...(likely === undefined ? {} : { likely }),
     };
   }

@@ -35,44 +35,37 @@ const ON_BANK: ReadonlySet<CauseId> = new Set<CauseId>([
   "knock-sensor-fault",
 ]);
 
-/** Where a cause would sit, as far as the case says. On one bank only where the vehicle has two. */
-export function locate(
-  cause: CauseId,
-  observations: readonly Observation[],
-  caseFile: CaseFile,
-): { bank: number | null; cylinder: number | null } {
-  const { banks, bank1Cylinders } = caseFile.vehicle;
-  let cylinder: number | null = null;
-  let bank: number | null = null;
-  if (AT_CYLINDER.has(cause)) {
-    const named = observations.filter(
-      (o) =>
-        o.cylinder !== undefined &&
-        (o.kind === "sign" || o.kind === "test" || (o.kind === "code" && /^injector/.test(o.codeFamily))),
-    );
-    cylinder = (named.find((o) => o.kind === "test") ?? named[0])?.cylinder ?? null;
-  }
-  if (banks === 2 && ON_BANK.has(cause)) {
-    const own = observations.filter((o) => o.bank !== undefined && o.abnormal && o.kind !== "code");
-    const coded =
-      caseFile.codes.length > 0
-        ? observations.find(
-            (o) => o.kind === "code" && o.bank !== undefined && KNOWLEDGE[cause].codes?.[o.codeFamily] !== undefined,
-          )
-        : undefined;
-    bank = (own.find((o) => o.kind === "test") ?? coded ?? own[0])?.bank ?? null;
-    const trims = observations.find((o) => o.kind === "trims");
-    if (bank === null && trims?.kind === "trims" && trims.abnormal) {
-      const { where, likelihood } = trimLikelihood(
-        KNOWLEDGE[cause].trims ?? "quiet",
-        caseFile.vehicle.airMetering === "map" ? "map" : "maf",
-        trims.trims,
-        2,
-      );
-      if (where.bank1 > 0.7 * likelihood) bank = 1;
-      else if (where.bank2 > 0.7 * likelihood) bank = 2;
+type Place = { bank: number | null; cylinder: number | null };
+
+/** Where a cause would sit, as far as the case says. A bank only where the vehicle has two. */
+export function locator(observations: readonly Observation[], caseFile: CaseFile): (cause: CauseId) => Place {
+  const { banks, bank1Cylinders, airMetering } = caseFile.vehicle;
+  const named = observations.filter(
+    (o) =>
+      o.cylinder !== undefined &&
+      (o.kind === "sign" || o.kind === "test" || (o.kind === "code" && o.codeFamily.startsWith("injector"))),
+  );
+  const theCylinder = (named.find((o) => o.kind === "test") ?? named[0])?.cylinder ?? null;
+  const banked = banks === 2 ? observations.filter((o) => o.bank !== undefined && o.abnormal) : [];
+  const tested = banked.find((o) => o.kind === "test")?.bank;
+  const signed = banked.find((o) => o.kind !== "code")?.bank;
+  const coded = banked.filter((o) => o.kind === "code");
+  const trims = observations.find((o) => o.kind === "trims");
+
+  const bankOf = (cause: CauseId, cylinder: number | null): number | null => {
+    const code = coded.find((o) => o.kind === "code" && KNOWLEDGE[cause].codes?.[o.codeFamily] !== undefined);
+    const said = tested ?? code?.bank ?? signed;
+    if (said !== undefined) return said;
+    if (trims?.kind === "trims" && trims.abnormal) {
+      const metering = airMetering === "map" ? "map" : "maf";
+      const { where, likelihood } = trimLikelihood(KNOWLEDGE[cause].trims ?? "quiet", metering, trims.trims, 2);
+      if (where.bank1 > 0.7 * likelihood) return 1;
+      if (where.bank2 > 0.7 * likelihood) return 2;
     }
-    if (bank === null && cylinder !== null && bank1Cylinders) bank = bank1Cylinders.includes(cylinder) ? 1 : 2;
-  }
-  return { bank, cylinder };
+    return cylinder !== null && bank1Cylinders ? (bank1Cylinders.includes(cylinder) ? 1 : 2) : null;
+  };
+  return (cause) => {
+    const cylinder = AT_CYLINDER.has(cause) ? theCylinder : null;
+    return { cylinder, bank: banks === 2 && ON_BANK.has(cause) ? bankOf(cause, cylinder) : null };
+  };
 }

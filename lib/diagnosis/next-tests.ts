@@ -29,6 +29,7 @@ const NEEDS_FIRST: Partial<Record<TestId, (o: readonly Observation[]) => boolean
   "wiggle-heat-cold": (o) => o.some((x) => x.kind === "circumstance" && x.circumstance === "intermittent"),
 };
 
+const rounded = (x: number) => Math.round(x * 1e4) / 1e4;
 const log2 = (x: number) => (x > 0 ? Math.log2(x) : 0);
 
 /**
@@ -39,7 +40,6 @@ export function nextTests(
   caseFile: CaseFile,
   observations: readonly Observation[],
   causes: readonly CauseId[],
-  totals: readonly number[],
   probability: readonly number[],
 ): NextTest[] {
   const done = new Set<TestId>(caseFile.tests.map((t) => t.id));
@@ -71,10 +71,10 @@ export function nextTests(
       minutes,
       tools,
       cautions,
-      expectedInformationBits: Number(information.toFixed(4)),
-      bitsPerMinute: Number(perMinute.toFixed(5)),
-      outcomeProbability: Object.fromEntries(testTable(id).outcomes.map((o, k) => [o, Number((p[k] ?? 0).toFixed(4))])),
-      ifOutcome: fork(id, causes, indices, totals),
+      expectedInformationBits: rounded(information),
+      bitsPerMinute: Math.round(perMinute * 1e5) / 1e5,
+      outcomeProbability: Object.fromEntries(testTable(id).outcomes.map((o, k) => [o, rounded(p[k] ?? 0)])),
+      ifOutcome: fork(id, causes, indices, probability),
       proves: Object.fromEntries(
         causes.flatMap((cause) => (PROVING[cause]?.[id] ? [[cause, PROVING[cause]?.[id]]] : [])),
       ),
@@ -87,15 +87,12 @@ function fork(
   id: TestId,
   causes: readonly CauseId[],
   indices: readonly number[],
-  totals: readonly number[],
+  probability: readonly number[],
 ): NextTest["ifOutcome"] {
-  const { outcomes, rows, base } = testTable(id);
-  const top = Math.max(...totals);
+  const { outcomes, rows } = testTable(id);
   const result: NextTest["ifOutcome"] = {};
   outcomes.forEach((outcome, k) => {
-    const likelihood = indices.map(
-      (index, c) => 2 ** ((totals[c] ?? 0) - top) * ((rows[index]?.[k] ?? 0) / (base[k] ?? 1)),
-    );
+    const likelihood = indices.map((index, c) => (probability[c] ?? 0) * (rows[index]?.[k] ?? 0));
     const sum = likelihood.reduce((s, x) => s + x, 0);
     const lead: number[] = [];
     for (let n = 0; n < NAMED_PER_OUTCOME; n++) {
@@ -104,9 +101,7 @@ function fork(
         if (!lead.includes(c) && (best < 0 || (likelihood[c] ?? 0) > (likelihood[best] ?? 0))) best = c;
       if (best >= 0) lead.push(best);
     }
-    result[outcome] = Object.fromEntries(
-      lead.map((c) => [causes[c] as CauseId, Number(((likelihood[c] ?? 0) / sum).toFixed(4))]),
-    );
+    result[outcome] = Object.fromEntries(lead.map((c) => [causes[c] as CauseId, rounded((likelihood[c] ?? 0) / sum)]));
   });
   return result;
 }

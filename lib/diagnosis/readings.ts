@@ -1,5 +1,5 @@
 import { isParameterId, PARAMETERS, type ParameterId } from "@/lib/obd/parameters";
-import { judge, missingPart } from "./bands";
+import { missingPart, unusableReason } from "./bands";
 import type { CaseFile, CylinderReadings, Sample } from "./case-file";
 import type { Mode } from "./vocabulary";
 
@@ -48,17 +48,17 @@ export class Readings {
         else if (typeof value === "string")
           this.loops.push({ value, path, mode: sample.mode, sample: index, parameter: key });
       } else if (kind === "number" && typeof value === "number") {
-        const judged = judge(key, value, sample.mode, vehicle);
-        if (judged.state === "impossible") this.notes.push({ path, message: judged.message });
+        const reason = unusableReason(key, value, vehicle);
+        if (reason !== null) this.notes.push({ path, message: reason });
         else push(this.numbers, key, { value, path, mode: sample.mode, sample: index });
       } else if (kind === "cylinders" && value !== null && typeof value === "object") {
         const kept: CylinderReadings = {};
         for (const [cylinder, v] of Object.entries(value as CylinderReadings)) {
           const at = `${path}.${cylinder}`;
-          const judged = judge(key, v, sample.mode, vehicle);
+          const reason = unusableReason(key, v, vehicle);
           if (vehicle.cylinders !== undefined && Number(cylinder) > vehicle.cylinders)
             this.notes.push({ path: at, message: `This engine has ${vehicle.cylinders} cylinders` });
-          else if (judged.state === "impossible") this.notes.push({ path: at, message: judged.message });
+          else if (reason !== null) this.notes.push({ path: at, message: reason });
           else kept[cylinder] = v;
         }
         if (Object.keys(kept).length > 0)

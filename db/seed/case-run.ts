@@ -196,7 +196,7 @@ export async function runStory(run: CaseRun): Promise<{ caseId: string; number: 
     revisionId: sent.revisionId,
     how: "phone",
     givenBy: story.customer,
-    contact: "555 01" + String(10 + Math.floor(random() * 89)),
+    contact: `555 01${String(10 + Math.floor(random() * 89))}`,
     keepParts: random() < 0.2,
     words: "Yes, do what is needed now.",
     answers: [

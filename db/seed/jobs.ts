@@ -268,10 +268,14 @@ export const EXTRA_JOBS: readonly DemoJob[] = [
 ];
 
 let serial = 0;
+function nextLineId(): string {
+  serial += 1;
+  return `ln_${serial}`;
+}
 
 export function linesOf(demo: DemoJob, rate: { id: string; perHourMinor: number }): QuoteLineDraft[] {
   const labour: QuoteLineDraft = {
-    id: `ln_${(serial += 1)}`,
+    id: nextLineId(),
     kind: "labour",
     description: demo.title,
     quantityMilli: Math.round(demo.hours * 1000),
@@ -285,7 +289,7 @@ export function linesOf(demo: DemoJob, rate: { id: string; perHourMinor: number 
     labour,
     ...demo.parts.map(
       ([description, partNumber, costMinor, unitPriceMinor, quantity = 1]): QuoteLineDraft => ({
-        id: `ln_${(serial += 1)}`,
+        id: nextLineId(),
         kind: "part",
         description,
         quantityMilli: quantity * 1000,

@@ -18,7 +18,7 @@ export function linkRoute<P extends { secret: string }>(
       limitRate(request, "link", { perMinute: LOOKUPS_PER_MINUTE });
       const params = await context.params;
       const opened = await openLink(params.secret, facts);
-      if (!opened || opened.state !== "open")
+      if (opened?.state !== "open")
         throw new AppError("not_found", "This link does not work any more. Please call the shop.");
       return handler({ request, ctx: opened.ctx, params });
     });

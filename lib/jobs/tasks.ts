@@ -97,7 +97,7 @@ export async function processFileTask(
       )[0],
     { readOnly: true },
   );
-  if (!file || file.state !== "processing") return;
+  if (file?.state !== "processing") return;
   const store = storage();
   const bytes = await store.read(file.storageKey);
   const sha256 = createHash("sha256").update(bytes).digest("hex");

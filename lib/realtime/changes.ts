@@ -10,7 +10,9 @@ export interface Change {
 
 type Listener = (change: Change) => void;
 
-const kept = globalThis as unknown as { firedeckChanges?: { listeners: Set<Listener>; client: pg.Client | null; starting: Promise<void> | null } };
+const kept = globalThis as unknown as {
+  firedeckChanges?: { listeners: Set<Listener>; client: pg.Client | null; starting: Promise<void> | null };
+};
 
 function hub() {
   kept.firedeckChanges ??= { listeners: new Set(), client: null, starting: null };

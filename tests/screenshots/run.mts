@@ -26,10 +26,17 @@ for (const theme of ["day", "night"] as const) {
     const open = async (as: string) => {
       const known = pages.get(as);
       if (known) return known;
-      const context = await browser.newContext({ viewport: { width, height }, colorScheme: theme === "night" ? "dark" : "light" });
+      const context = await browser.newContext({
+        viewport: { width, height },
+        colorScheme: theme === "night" ? "dark" : "light",
+      });
       if (width === 1180) await context.addInitScript(() => localStorage.setItem("fd-density", "bay"));
       const who = demo.signIns.find((each: { role: string }) => each.role === as);
-      if (who) await context.request.post(`${base}/api/auth/sign-in/email`, { data: { email: who.email, password: who.password }, headers: { origin: base } });
+      if (who)
+        await context.request.post(`${base}/api/auth/sign-in/email`, {
+          data: { email: who.email, password: who.password },
+          headers: { origin: base },
+        });
       const page = await context.newPage();
       pages.set(as, page);
       return page;

@@ -10,7 +10,7 @@ export const metadata: Metadata = { title: "Invitation" };
 export default async function InvitationPage({ params }: { params: Promise<{ id: string }> }) {
   const { id } = await params;
   const invitation = await readInvitation(id);
-  if (!invitation || invitation.state !== "pending") {
+  if (invitation?.state !== "pending") {
     return (
       <div className="form">
         <h1>This invitation no longer works</h1>

@@ -12,7 +12,7 @@ export const metadata: Metadata = { title: "Your invoice", robots: { index: fals
 export default async function Page({ params }: { params: Promise<{ secret: string }> }) {
   const { secret } = await params;
   const opened = await openLink(secret, await requestFacts());
-  if (!opened || opened.ctx.link?.kind !== "invoice") return <LinkOver why="unknown" shop={null} />;
+  if (opened?.ctx.link?.kind !== "invoice") return <LinkOver why="unknown" shop={null} />;
   if (opened.state !== "open") {
     const shop = { ...opened.shop, address: "", registration: "" };
     return <LinkOver why={opened.state === "revoked" ? "withdrawn" : "expired"} shop={shop} />;

@@ -15,7 +15,7 @@ export const metadata: Metadata = { title: "Your vehicle", robots: { index: fals
 export default async function QuotePage({ params }: { params: Promise<{ secret: string }> }) {
   const { secret } = await params;
   const opened = await openLink(secret, await requestFacts());
-  if (!opened || opened.ctx.link?.kind !== "quote") return <LinkOver why="unknown" shop={null} />;
+  if (opened?.ctx.link?.kind !== "quote") return <LinkOver why="unknown" shop={null} />;
   const { ctx } = opened;
   const quote = await readCustomerQuote(ctx);
   const { snapshot, standing } = quote;

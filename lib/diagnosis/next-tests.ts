@@ -9,10 +9,10 @@ import { type CauseId, TEST_IDS, type TestId } from "./vocabulary";
 
 const LISTED = 8;
 const NAMED_PER_OUTCOME = 3;
+/** Of the most telling test's information, the least that is still suggested. */
+const WORTH_DOING = 0.25;
 /** Below this a test tells next to nothing. */
 const LEAST_BITS = 0.002;
-/** Walking over, hooking up, writing down: no test is free. Common practice. */
-const SET_UP_MINUTES = 4;
 
 /** Tests whose outcome only means something beside another. */
 const NEEDS_FIRST: Partial<Record<TestId, (o: readonly Observation[]) => boolean>> = {
@@ -59,11 +59,13 @@ export function nextTests(
       given += q * (selfInformation[index] as number);
     }
     const information = Math.max(0, given - p.reduce((s, x) => s + x * log2(x), 0));
-    if (information >= LEAST_BITS)
-      list.push({ id, information, p, perMinute: information / (TESTS[id].minutes + SET_UP_MINUTES) });
+    if (information >= LEAST_BITS) list.push({ id, information, p, perMinute: information / TESTS[id].minutes });
   }
   list.sort((a, b) => b.perMinute - a.perMinute || (a.id < b.id ? -1 : 1));
-  return list.slice(0, LISTED).map(({ id, information, p, perMinute }) => {
+  // A quick look that tells a quarter of what another test tells is no step forward, however quick.
+  const most = list.reduce((m, t) => Math.max(m, t.information), 0);
+  const telling = list.filter((t) => t.information >= WORTH_DOING * most);
+  return telling.slice(0, LISTED).map(({ id, information, p, perMinute }) => {
     const { title, minutes, tools, cautions } = TESTS[id];
     return {
       id,

@@ -114,11 +114,11 @@ export function variants(behaviour: TrimBehaviour, metering: "maf" | "map"): Var
       return spread(even(4), 0, (i) => ({ extraFuelGps: each([0.009, 0.016, 0.024, 0.034], i) }));
     case "purge":
       return [
-        ...spread([0.15, 0.2, 0.2, 0.15], 0, (i) => ({
+        ...spread([0.18, 0.22, 0.22, 0.18], 0, (i) => ({
           extraFuelGps: each([0.012, 0.02, 0.03, 0.042], i),
           extraAirGps: 0.05,
         })),
-        ...spread([0.1, 0.1, 0.1], 0, (i) => ({ extraAirGps: each([0.18, 0.32, 0.5], i) })),
+        ...spread([0.07, 0.07, 0.06], 0, (i) => ({ extraAirGps: each([0.18, 0.32, 0.5], i) })),
       ];
     case "injector-rich":
       return [

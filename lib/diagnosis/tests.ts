@@ -58,7 +58,7 @@ const ROWS: readonly Row[] = [
   [
     "intake-smoke",
     "Smoke test of the intake",
-    25,
+    20,
     ["smoke machine", "block-off adapters"],
     ["smoke"],
     { "leak-seen": "Leak seen", "no-leak": "No leak" },
@@ -74,7 +74,7 @@ const ROWS: readonly Row[] = [
   [
     "crankcase-vent-pinch",
     "Pinch or cap the crankcase vent hose",
-    4,
+    10,
     ["soft-jaw pliers or cap", "scan data"],
     ["crush"],
     { "trim-recovers": "Trim recovers", "no-change": "No change" },
@@ -82,7 +82,7 @@ const ROWS: readonly Row[] = [
   [
     "booster-hose-pinch",
     "Pinch or cap the brake booster hose",
-    5,
+    10,
     ["soft-jaw pliers or cap", "scan data"],
     ["booster"],
     { "trim-recovers": "Trim recovers", "no-change": "No change" },
@@ -122,7 +122,7 @@ const ROWS: readonly Row[] = [
   [
     "fuel-pressure",
     "Fuel pressure against the maker's figure",
-    20,
+    15,
     ["pressure gauge"],
     ["fuel"],
     { low: "Low", "in-spec": "In specification", high: "High" },
@@ -130,7 +130,7 @@ const ROWS: readonly Row[] = [
   [
     "fuel-pressure-under-load",
     "Fuel pressure under load",
-    25,
+    20,
     ["pressure gauge", "road or load"],
     ["fuel", "road", "leanload"],
     { drops: "Drops", holds: "Holds" },

@@ -207,7 +207,7 @@ export const AIR: KnowledgePart = {
       "knock-retard": { high: 8 },
     },
     tests: {
-      "maf-unplugged": { "runs-better": 70, "runs-worse": 6 },
+      "maf-unplugged": { "runs-better": 60, "runs-worse": 8 },
       "fuel-pressure-under-load": { drops: 3 },
       "intake-smoke": { "leak-seen": 3 },
     },

@@ -1,7 +1,7 @@
 import { isParameterId, PARAMETERS, type ParameterId } from "@/lib/obd/parameters";
 import { missingPart, unusableReason } from "./bands";
 import type { CaseFile, CylinderReadings, Sample } from "./case-file";
-import type { Mode } from "./vocabulary";
+import { MODES, type Mode } from "./vocabulary";
 
 export interface Note {
   path: string;
@@ -128,18 +128,23 @@ export class Readings {
 }
 
 /**
- * Samples of one mode in an order of their own content, so that the order they were typed in decides nothing. Where a
- * mode was measured twice, subjects that want one reading take the last of this order.
+ * Samples in the order of the modes and, inside a mode, of their own content, so that the order they were typed in
+ * decides nothing. Where one reading is wanted and several stand there, subjects take the last of this order.
  */
 function inFixedOrder(samples: readonly Sample[]): number[] {
-  const indices = samples.map((_, i) => i);
-  if (new Set(samples.map((s) => s.mode)).size === samples.length) return indices;
-  const key = (i: number) =>
-    JSON.stringify(Object.entries(samples[i]?.values ?? {}).sort(([a], [b]) => (a < b ? -1 : 1)));
-  const keys = indices.map(key);
-  return indices.sort((a, b) =>
-    (keys[a] as string) < (keys[b] as string) ? -1 : (keys[a] as string) > (keys[b] as string) ? 1 : a - b,
-  );
+  const keys = new Map<number, string>();
+  const key = (i: number): string => {
+    let text = keys.get(i);
+    if (text === undefined) {
+      text = JSON.stringify(Object.entries(samples[i]?.values ?? {}).sort(([a], [b]) => (a < b ? -1 : 1)));
+      keys.set(i, text);
+    }
+    return text;
+  };
+  const rank = (i: number) => MODES.indexOf((samples[i] as Sample).mode);
+  return samples
+    .map((_, i) => i)
+    .sort((a, b) => rank(a) - rank(b) || (key(a) < key(b) ? -1 : key(a) > key(b) ? 1 : a - b));
 }
 
 function push<T>(map: Map<string, T[]>, key: string, item: T): void {

@@ -88,7 +88,7 @@ function Opened({ entry, hideChain }: { entry: AuditEntryView; hideChain?: boole
             </thead>
             <tbody>
               {entry.fields.map((field) => (
-                <tr key={field.name} className={field.isChanged ? "ch" : undefined}>
+                <tr key={field.name} className={field.isChanged ? "moved" : undefined}>
                   <th scope="row">{field.name}</th>
                   <td className={cx(field.numeric && "num")}>
                     {field.isChanged && field.before ? (

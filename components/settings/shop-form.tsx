@@ -67,7 +67,7 @@ export function ShopForm({ shop, timeZones, currencies, save, onSaved }: ShopFor
     mode: "onTouched",
     defaultValues: valuesOf(shop.name, shop.settings),
   });
-  const { register, formState, handleSubmit, setError, setFocus, reset } = form;
+  const { register, formState, getValues, handleSubmit, setError, setFocus, setValue, reset } = form;
   const { errors, isDirty, isSubmitting } = formState;
   const error = (name: keyof ShopFormValues) => errors[name]?.message as string | undefined;
   const start = valuesOf(shop.name, shop.settings);
@@ -82,12 +82,16 @@ export function ShopForm({ shop, timeZones, currencies, save, onSaved }: ShopFor
 
   async function send(values: ShopFormValues, over: SavedShop = kept) {
     setFailure("");
+    const typed = JSON.stringify(getValues());
     const next = { name: values.name, version: over.version, settings: settingsOf(values, over.settings) };
     const answer = await save({ ...next, reason: values.reason || undefined });
     if (answer.ok) {
       setConflict(null);
       setKept({ ...next, version: answer.version });
-      reset(valuesOf(next.name, next.settings));
+      // what was typed while it was on its way stays
+      const isStill = JSON.stringify(getValues()) === typed;
+      reset(valuesOf(next.name, next.settings), { keepValues: !isStill });
+      if (!isStill) setValue("reason", "", { shouldDirty: true });
       return onSaved();
     }
     if (answer.current) return setConflict({ theirs: answer.current, mine: values });

@@ -233,7 +233,7 @@ export function QuotedApproved({
 /** The round figure at the top of a money axis. */
 export function niceTop(value: number): number {
   const base = 10 ** Math.floor(Math.log10(value));
-  return [1, 2, 5, 10].map((n) => n * base).find((n) => n >= value) ?? value;
+  return [1, 2, 3, 4, 5, 6, 8, 10].map((n) => n * base).find((n) => n >= value) ?? value;
 }
 
 /** Hours billed of hours on the clock, zero-based to 100 %. */

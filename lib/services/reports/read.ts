@@ -109,6 +109,7 @@ async function waitingHours(tx: Tx, ctx: Ctx, span: Span): Promise<WaitingWeek[]
 
 export interface QuotedWeek {
   week: string;
+  /** Jobs answered, and those of them said yes to. */
   jobs: number;
   yesJobs: number;
   quotedMinor: number;
@@ -132,7 +133,7 @@ async function quotedAndApproved(tx: Tx, ctx: Ctx, span: Span): Promise<QuotedWe
       where r.sent_at >= ${instant(span.from)} and r.sent_at <= ${instant(span.to)}
         and r.withdrawn_at is null and (r.superseded_at is null or a.id is not null)
     )
-    select week, count(*) as jobs, count(*) filter (where is_yes) as "yesJobs", sum(minor) as "quotedMinor",
+    select week, count(*) filter (where not is_open) as jobs, count(*) filter (where is_yes) as "yesJobs", sum(minor) as "quotedMinor",
       coalesce(sum(minor) filter (where is_yes), 0) as "approvedMinor", coalesce(sum(minor) filter (where is_open), 0) as "openMinor"
     from asked group by week order by week`,
   );

@@ -138,7 +138,7 @@ export default async function VehiclePage({ params, searchParams }: Props) {
                   spoken={`Change the engine facts of ${title}`}
                   look="link"
                   title={`Engine of ${title}`}
-                  intro="The assessment reads these: what an engine does not have can’t be at fault. Open cases are judged anew."
+                  intro="The assessment reads these: what an engine does not have can’t be at fault. Open cases are judged by them from now on."
                   verb="vehicle.save"
                   input={kept}
                   fields={engineFields(engine)}

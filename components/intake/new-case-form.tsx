@@ -497,7 +497,15 @@ export function NewCaseForm(props: NewCaseFormProps) {
                     ? "Recorded with your name, the time, and how. Without it the case can be saved but not tested."
                     : "A service writer or the owner records this."
                 }
-                {...register("isAuthorized")}
+                {...register("isAuthorized", {
+                  // nearly always the customer; the field stays open for someone who speaks for them
+                  onChange: (event) => {
+                    const name = customer?.name ?? form.getValues("name");
+                    if (event.target.checked && !form.getValues("givenBy")) {
+                      setValue("givenBy", name, { shouldDirty: true, shouldValidate: true });
+                    }
+                  },
+                })}
               >
                 {(customer?.name ?? v.name) || "The customer"} agrees to diagnosis up to{" "}
                 {ceilingMinor ? formatPrice(ceilingMinor, currency, locale) : "this amount"}

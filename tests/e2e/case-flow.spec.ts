@@ -53,7 +53,8 @@ async function fromDatabase<T extends pg.QueryResultRow>(sql: string, values: un
 function pdfText(bytes: Buffer): string {
   const file = join(mkdtempSync(join(tmpdir(), "paper-")), "paper.pdf");
   writeFileSync(file, bytes);
-  return execFileSync("pdftotext", ["-layout", file, "-"], { encoding: "utf8" });
+  // in reading order, so that a sentence broken in its column is one again
+  return execFileSync("pdftotext", [file, "-"], { encoding: "utf8" }).replaceAll(/\s+/g, " ");
 }
 
 test("all four people play one case from the complaint to the invoice", async ({ browser }) => {
@@ -126,7 +127,7 @@ test("all four people play one case from the complaint to the invoice", async ({
         await dialog.getByRole("button", { name: "Add the sample" }).click();
         await expect(dialog).toBeHidden();
       } else await addSample(bay, mode);
-      await expect(bay.getByRole("columnheader", { name: new RegExp(mode) })).toBeVisible();
+      await expect(bay.getByRole("columnheader", { name: new RegExp(`${mode}.*Change`) }).first()).toBeVisible();
       await typeReadings(bay, sample.mode, 0, sample.values);
     }
     await expect
@@ -258,11 +259,11 @@ test("all four people play one case from the complaint to the invoice", async ({
       "Fuel vapour gets into your engine at a standstill",
     );
     await phone
-      .getByRole("radiogroup", { name: /New valve/ })
+      .getByRole("group", { name: /New valve/ })
       .getByText("Yes, do it")
       .click();
     await phone
-      .getByRole("radiogroup", { name: /spark plugs/i })
+      .getByRole("group", { name: /spark plugs/i })
       .getByText("Not now")
       .click();
     await phone.getByLabel("Your full name").fill(customer.name);
@@ -281,13 +282,13 @@ test("all four people play one case from the complaint to the invoice", async ({
     await bay.getByRole("button", { name: "Clock on" }).first().click();
     await expect(bay.getByRole("button", { name: "Clock off" }).first()).toBeVisible();
     await bay
-      .getByRole("button", { name: /^(One more|\+|Fit one|Add one|Plus)/i })
+      .getByRole("button", { name: /^One more/ })
       .first()
       .click();
     await bay.getByRole("button", { name: "Job done" }).first().click();
     const dialog = bay.getByRole("dialog");
     await dialog.getByRole("textbox").first().fill("Purge valve renewed, line checked.");
-    await dialog.getByRole("button").last().click();
+    await dialog.locator("button[type=submit]").click();
     await expect(dialog).toBeHidden();
     await bay.getByRole("button", { name: "Go to proof" }).click();
     await bay.waitForURL(/\/proof/);

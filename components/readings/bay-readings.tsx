@@ -215,7 +215,8 @@ export function BayReadings({
         </div>
         {parameter && unit && (
           <section className={cx("pad", family)} aria-label="Enter a reading">
-            <div className="padhead">
+            {/* biome-ignore lint/a11y/noNoninteractiveTabindex: it scrolls on a low tablet, so the keyboard must reach it */}
+            <div className="padhead" role="group" aria-label="Reading" tabIndex={0}>
               <div className="label">
                 <Words>{rowLabel(parameter, context.vehicle.banks)}</Words>
               </div>

@@ -18,5 +18,6 @@ beforeAll(async () => {
 
 afterAll(async () => {
   await closePools();
-  await dropDatabase(server, name);
+  // the whole cluster is thrown away afterwards; a copy that is still busy must not fail the tests that passed
+  await dropDatabase(server, name).catch(() => undefined);
 });

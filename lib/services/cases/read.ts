@@ -5,6 +5,7 @@ import { audit, parts as catalogue, labourRates, operations, papers, setJobs } f
 import type { Ctx } from "@/lib/auth/context";
 import { mayDo } from "@/lib/auth/permissions";
 import { notFound } from "@/lib/errors";
+import { shopMemory } from "../causes/memory";
 import { readIn } from "../verb";
 import { refreshedView } from "./view";
 
@@ -16,7 +17,8 @@ export async function readCase(ctx: Ctx, number: number) {
         ? await caseByNumber(tx, ctx.shopId, number)
         : undefined;
     if (!row) throw notFound("The case");
-    return refreshedView(ctx, withoutCosts(ctx, await loadCaseParts(tx, row)));
+    const memory = await shopMemory(tx, ctx.shopId, row.id);
+    return refreshedView(ctx, withoutCosts(ctx, await loadCaseParts(tx, row)), memory);
   });
 }
 

@@ -9,6 +9,7 @@ import { assess } from "@/lib/diagnosis/assess";
 import { CAUSES } from "@/lib/diagnosis/causes";
 import { AppError, notFound } from "@/lib/errors";
 import { newId } from "@/lib/ids";
+import { shopMemory } from "../causes/memory";
 import { caseFileOf, factsOf, parkReasonOf } from "./facts";
 
 export interface OpenCaseOptions {
@@ -89,14 +90,17 @@ export async function refreshCase(tx: Tx, ctx: Ctx, caseId: string): Promise<Cas
     waitingOn: waiting.party,
     waitingFor: waiting.for,
     searchText: searchTextOf(parts),
-    ...leadOf(parts),
+    ...(await leadOf(tx, parts)),
   };
   const isSame = (Object.keys(change) as (keyof typeof change)[]).every((key) => change[key] === row[key]);
   if (!isSame) await setCase(tx, ctx, caseId, change);
   return { ...parts, row: { ...row, ...change } };
 }
 
-function leadOf(parts: CaseParts): Pick<CaseRow, "leadCause" | "leadFamily" | "leadProbability" | "leadMark"> {
+async function leadOf(
+  tx: Tx,
+  parts: CaseParts,
+): Promise<Pick<CaseRow, "leadCause" | "leadFamily" | "leadProbability" | "leadMark">> {
   const marked = parts.marks.findLast((mark) => mark.mark === "proven") ?? parts.marks.at(-1);
   if (marked) {
     const cause = CAUSES[marked.causeId as keyof typeof CAUSES];
@@ -111,7 +115,8 @@ function leadOf(parts: CaseParts): Pick<CaseRow, "leadCause" | "leadFamily" | "l
     parts.samples.some((sample) => Object.keys(sample.values).length > 0) ||
     parts.codes.length > 0 ||
     parts.tests.length > 0;
-  const lead = hasReadings ? assess(caseFileOf(parts)).causes[0] : undefined;
+  const memory = hasReadings ? await shopMemory(tx, parts.row.shopId, parts.row.id) : undefined;
+  const lead = hasReadings ? assess(caseFileOf(parts), { memory }).causes[0] : undefined;
   if (!lead) return { leadCause: null, leadFamily: null, leadProbability: null, leadMark: null };
   return {
     leadCause: lead.id,

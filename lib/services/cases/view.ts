@@ -2,6 +2,7 @@ import "server-only";
 import type { CaseParts } from "@/db/queries/cases";
 import type { Ctx } from "@/lib/auth/context";
 import { gateOf } from "@/lib/cases/stages";
+import type { ShopMemory } from "@/lib/diagnosis/answer";
 import { assess } from "@/lib/diagnosis/assess";
 import { priceDiagnosis } from "../quotes/price";
 import {
@@ -16,7 +17,7 @@ import {
 } from "./facts";
 
 /** A case with what follows from it: the file, the assessment, the proof, the gate, the diagnosis so far. */
-export function refreshedView(ctx: Ctx, parts: CaseParts) {
+export function refreshedView(ctx: Ctx, parts: CaseParts, memory: ShopMemory) {
   const caseFile = caseFileOf(parts);
   const proof = proofOf(parts, caseFile);
   const facts = factsOf(parts, ctx.now, proof);
@@ -24,7 +25,7 @@ export function refreshedView(ctx: Ctx, parts: CaseParts) {
     parts,
     settings: settingsOf(parts),
     caseFile,
-    assessment: assess(caseFile),
+    assessment: assess(caseFile, { memory }),
     proof,
     facts,
     gate: gateOf(facts),

@@ -9,6 +9,7 @@ import { newId } from "@/lib/ids";
 import { caseFileOf } from "../cases/facts";
 import { lockOpenCase, openForWrite, refreshCase } from "../cases/refresh";
 import { defineVerb } from "../verb";
+import { shopMemory } from "./memory";
 import { recordOutcome } from "./record";
 
 export const recordTest = defineVerb({
@@ -66,7 +67,8 @@ export const markCause = defineVerb({
         "A proof needs a recorded test or reading. Record it, or mark the cause as suspected.",
       );
     }
-    const ranked = assess(caseFileOf(parts)).causes;
+    const memory = await shopMemory(tx, ctx.shopId, caseId);
+    const ranked = assess(caseFileOf(parts), { memory }).causes;
     const rank = ranked.findIndex((cause) => cause.id === causeId);
     const found = ranked[rank];
     // a new word on the same cause replaces the old one

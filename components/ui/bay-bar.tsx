@@ -9,6 +9,8 @@ export interface BayBarProps {
   strip: StripView;
   /** "Testing, due 16:30". */
   stateWords: string;
+  /** "Late since 07:30", inverse. */
+  late?: string;
   /** A `MiniStage`. */
   mini: ReactNode;
   /** The parts of the case: the first four stand in the bar, the rest under More. */
@@ -22,7 +24,7 @@ export interface BayBarProps {
 const IN_BAR = ["Readings", "Causes", "Repair", "Proof"];
 
 /** The bar of the bay: everything a gloved hand needs, 60 px high, and the complaint under it. */
-export function BayBar({ home = "/cases", strip, stateWords, mini, parts, save, menu, agreed }: BayBarProps) {
+export function BayBar({ home = "/cases", strip, stateWords, late, mini, parts, save, menu, agreed }: BayBarProps) {
   const shown = parts.filter((part) => IN_BAR.includes(part.label));
   const rest = parts.filter((part) => !IN_BAR.includes(part.label));
   return (
@@ -36,7 +38,7 @@ export function BayBar({ home = "/cases", strip, stateWords, mini, parts, save, 
           <b>{strip.vehicle}</b>
         </div>
         <span className="bst">
-          {mini} {stateWords}
+          {mini} {stateWords} {late && <span className="alarm">{late}</span>}
         </span>
         <nav aria-label="Parts of the case">
           {shown.map((part) => (
@@ -45,7 +47,7 @@ export function BayBar({ home = "/cases", strip, stateWords, mini, parts, save, 
             </Link>
           ))}
           <details className="more">
-            <summary>More</summary>
+            <summary aria-current={rest.some((part) => part.current) ? "true" : undefined}>More</summary>
             <div className="menu">
               {rest.map((part) => (
                 <Link key={part.href} href={part.href} aria-current={part.current ? "page" : undefined}>

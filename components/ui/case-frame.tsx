@@ -25,7 +25,8 @@ export interface CaseFrameProps {
  * switched to the bay needs no reload.
  */
 export function CaseFrame({ top, strip, stage, parts, dueWords, agreed, save, menu, children }: CaseFrameProps) {
-  const words = [stage.held ? "On hold" : STAGE_WORDS[stage.now], dueWords].filter(Boolean).join(", ");
+  const late = strip.facts.find((fact) => fact.alarm)?.value;
+  const words = [stage.held ? "On hold" : STAGE_WORDS[stage.now], !late && dueWords].filter(Boolean).join(", ");
   return (
     <>
       <a className="skip" href="#main">
@@ -40,6 +41,7 @@ export function CaseFrame({ top, strip, stage, parts, dueWords, agreed, save, me
         <BayBar
           strip={strip}
           stateWords={words}
+          late={late}
           mini={<MiniStage now={stage.now} held={stage.held} />}
           parts={parts}
           save={save}

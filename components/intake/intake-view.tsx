@@ -101,7 +101,7 @@ export function IntakePart({ intake, acts, gate }: IntakePartProps) {
                 <b className="num">{yes.amount}</b>, tax included
                 <br />
                 <span className="faint">
-                  {yes.givenBy}, {yes.how}, {yes.when}; taken by {yes.takenBy}
+                  {yes.givenBy}, {yes.how.toLowerCase()}, {yes.when}; taken by {yes.takenBy}
                 </span>
                 {yes.words && <p className="said">{yes.words}</p>}
               </li>

@@ -55,7 +55,8 @@ export function codeViews(view: CaseView): CodeView[] {
   }));
 }
 
-const lower = (text: string) => text.charAt(0).toLowerCase() + text.slice(1);
+/** A code or an abbreviation keeps its capitals. */
+const lower = (text: string) => (/^[A-Z][A-Z0-9]/.test(text) ? text : text.charAt(0).toLowerCase() + text.slice(1));
 
 /** The finding a part opens with, as one sentence. */
 export function readingsTitle(view: CaseView): string {

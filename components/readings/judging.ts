@@ -70,10 +70,15 @@ export interface Computed {
 
 export const TOTAL_TRIM_BAND: Band = { low: -10, high: 10 };
 
+/** Short and long together; nothing where either is missing or beyond what a control unit can state. */
 export function totalTrim(values: Values, bank: 1 | 2): Computed | null {
-  const short = numberAt(values, bank === 1 ? "SHRTFT1" : "SHRTFT2");
-  const long = numberAt(values, bank === 1 ? "LONGFT1" : "LONGFT2");
-  if (short === null || long === null) return null;
+  const parts = (bank === 1 ? (["SHRTFT1", "LONGFT1"] as const) : (["SHRTFT2", "LONGFT2"] as const)).map((id) => {
+    const value = numberAt(values, id);
+    const { possible } = PARAMETERS[id];
+    return value !== null && possible && (value < possible.min || value > possible.max) ? null : value;
+  });
+  const [short, long] = parts;
+  if (short == null || long == null) return null;
   const value = short + long;
   const state = judgeTotalTrim(value);
   return { value, band: TOTAL_TRIM_BAND, family: state === "outside" ? (value > 0 ? "lean" : "rich") : null };

@@ -55,10 +55,18 @@ const PLAIN: Partial<Record<ParameterId, string>> = {
 const numberOf = (value: unknown): number | null =>
   typeof value === "number" && Number.isFinite(value) ? value : null;
 
+/** A trim beyond what a control unit can state is kept with the case, but is not told to the customer. */
+function trimOf(sample: Sample, id: "SHRTFT1" | "LONGFT1"): number | null {
+  const value = numberOf(sample.values[id]);
+  const { possible } = PARAMETERS[id];
+  return value !== null && possible && (value < possible.min || value > possible.max) ? null : value;
+}
+
 function trimReading(sample: Sample): RevisionReading | null {
-  const total = numberOf(sample.values.LONGFT1) ?? numberOf(sample.values.SHRTFT1);
-  if (total === null) return null;
-  const sum = (numberOf(sample.values.SHRTFT1) ?? 0) + (numberOf(sample.values.LONGFT1) ?? 0);
+  const short = trimOf(sample, "SHRTFT1");
+  const long = trimOf(sample, "LONGFT1");
+  if (short === null && long === null) return null;
+  const sum = (short ?? 0) + (long ?? 0);
   const inside = sum >= TRIM.low && sum <= TRIM.high;
   const amount = Math.round(Math.abs(sum));
   const value = inside ? `${amount} %, as usual` : `${amount} % ${sum > 0 ? "extra" : "less"}`;

@@ -1,4 +1,5 @@
 import { z } from "zod";
+import "@/lib/fault-words";
 import { parseMoney, parseNumber } from "@/components/ui/parse-entry";
 import { kmInternal, type UnitPrefs } from "@/components/ui/units";
 import { zonedToIso } from "@/components/ui/zoned-time";

@@ -1,6 +1,7 @@
 "use client";
 
 import { zodResolver } from "@hookform/resolvers/zod";
+import "@/lib/fault-words";
 import { type ReactNode, useState } from "react";
 import { type FieldPath, type SubmitErrorHandler, type UseFormRegister, useForm } from "react-hook-form";
 import { Button, WhyOff } from "@/components/ui/button";

@@ -1,4 +1,5 @@
 import { ZodError } from "zod";
+import "@/lib/fault-words";
 import { AppError, type ErrorCode, type FieldError } from "@/lib/errors";
 
 export const STATUS: Record<ErrorCode, number> = {

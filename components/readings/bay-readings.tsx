@@ -216,7 +216,7 @@ export function BayReadings({
         {parameter && unit && (
           <section className={cx("pad", family)} aria-label="Enter a reading">
             {/* biome-ignore lint/a11y/noNoninteractiveTabindex: it scrolls on a low tablet, so the keyboard must reach it */}
-            <div className="padhead" role="group" aria-label="Reading" tabIndex={0}>
+            <section className="padhead" aria-label="Reading" tabIndex={0}>
               <div className="label">
                 <Words>{rowLabel(parameter, context.vehicle.banks)}</Words>
               </div>
@@ -285,7 +285,7 @@ export function BayReadings({
               <p className="baysave">
                 <SaveState state={busy ? { kind: "saving" } : state} />
               </p>
-            </div>
+            </section>
             {!readOnly && (
               <Keypad
                 onKey={press}

@@ -322,6 +322,7 @@ function AddLine({ rates, find, onAdd }: AddLineProps) {
   return (
     <Combobox
       className="addline"
+      takesFocus
       label="Add a line"
       placeholder="A part, an operation, or a new line"
       onQuery={(text) => {

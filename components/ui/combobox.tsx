@@ -1,6 +1,6 @@
 "use client";
 
-import { type KeyboardEvent, type ReactNode, useId, useState } from "react";
+import { type KeyboardEvent, type ReactNode, useEffect, useId, useRef, useState } from "react";
 import { cx } from "./cx";
 
 export interface ComboOption {
@@ -28,6 +28,8 @@ export interface ComboboxProps {
   inputClassName?: string;
   describedBy?: string;
   invalid?: boolean;
+  /** The field takes the focus when it appears: for one that takes the place of the button that was pressed. */
+  takesFocus?: boolean;
   /** Shown in front of the field, inside its border (chosen items). */
   before?: ReactNode;
 }
@@ -50,6 +52,16 @@ export function Combobox(props: ComboboxProps) {
   const [active, setActive] = useState(0);
   const shown = (onQuery ? [...options] : options.filter((option) => matches(option, query.trim()))).slice(0, 60);
   const current = shown[Math.min(active, shown.length - 1)];
+  const field = useRef<HTMLInputElement>(null);
+  const { takesFocus } = props;
+  useEffect(() => {
+    if (takesFocus) field.current?.focus();
+  }, [takesFocus]);
+  const currentId = open && current ? `${id}-${current.value}` : undefined;
+  useEffect(() => {
+    // the list is longer than its box: the arrows bring the chosen row into sight
+    if (currentId) document.getElementById(currentId)?.scrollIntoView?.({ block: "nearest" });
+  }, [currentId]);
 
   function take(option: ComboOption | undefined) {
     if (!option) return;
@@ -79,6 +91,7 @@ export function Combobox(props: ComboboxProps) {
     <div className={cx("combo", props.className)}>
       {props.before}
       <input
+        ref={field}
         id={id}
         className={cx("input", props.inputClassName)}
         role="combobox"
@@ -86,7 +99,7 @@ export function Combobox(props: ComboboxProps) {
         aria-expanded={open}
         aria-controls={`${id}-list`}
         aria-autocomplete="list"
-        aria-activedescendant={open && current ? `${id}-${current.value}` : undefined}
+        aria-activedescendant={currentId}
         aria-describedby={props.describedBy}
         aria-invalid={props.invalid || undefined}
         autoComplete="off"

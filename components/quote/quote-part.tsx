@@ -327,7 +327,10 @@ export function QuotePart(props: QuotePartProps) {
           causes={props.causes}
           onAdd={async (fields) => {
             const result = await props.onAddJob(fields);
-            if (result.ok) setAdding(null);
+            if (result.ok) {
+              setAdding(null);
+              setFault(null);
+            }
             return result;
           }}
         />

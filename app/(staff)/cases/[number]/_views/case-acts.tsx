@@ -1,4 +1,5 @@
 import { moneyEntry } from "@/components/ui/parse-entry";
+import { kmShown } from "@/components/ui/units";
 import { isoToZoned } from "@/components/ui/zoned-time";
 import type { Ctx } from "@/lib/auth/context";
 import { mayDo } from "@/lib/auth/permissions";
@@ -7,6 +8,7 @@ import { BACK, isOver, type PathStage, STAGE_LABELS, type Stage } from "@/lib/ca
 import type { CaseView } from "@/lib/services/cases/view";
 import { ActButton } from "../../../_client/act-button";
 import { ActDialog } from "../../../_client/act-dialog";
+import { PhotoUpload } from "../_client/photo-upload";
 
 const WAYS = AUTHORIZATION_WAYS.filter((way) => way !== "link").map((value) => ({
   value,
@@ -38,6 +40,36 @@ export function CaseActs({ ctx, view }: { ctx: Ctx; view: CaseView }) {
   }
   return (
     <div className="acts wrap">
+      {mayDo(role, "case.editIntake") && (
+        <ActDialog
+          label="Change the intake"
+          verb="case.editIntake"
+          input={{ caseId, version: row.version }}
+          fields={[
+            { kind: "area", name: "words", label: "In the customer’s words", value: row.words },
+            {
+              kind: "text",
+              name: "conditionNote",
+              label: "More of when it happens",
+              optional: true,
+              value: row.conditionNote ?? "",
+            },
+            {
+              kind: "odometer",
+              name: "odometerInKm",
+              label: "Odometer in",
+              units: settings.units,
+              optional: true,
+              value: row.odometerInKm === null ? "" : String(kmShown(row.odometerInKm, settings.units)),
+            },
+            { kind: "check", name: "keepParts", label: "Keep the replaced parts", value: row.keepParts },
+            { kind: "check", name: "roadTestAllowed", label: "May be driven on the road", value: row.roadTestAllowed },
+            { kind: "text", name: "reason", label: "Why it changes", optional: true },
+          ]}
+          sendLabel="Change it"
+        />
+      )}
+      <PhotoUpload caseId={caseId} />
       {mayDo(role, "diagnosis.authorize") && (
         <ActDialog
           label={view.diagnosis.ceilingMinor === null ? "Record the yes to the diagnosis" : "Record a higher ceiling"}

@@ -17,8 +17,10 @@ export function parseNumber(text: string): number | null {
   return Number.isFinite(n) ? n : null;
 }
 
-/** An amount as typed ("180", "$1,180.50") in minor units, or null. */
+/** An amount as typed ("180", "$1,180.50", "180 USD") in minor units, or null. */
 export function parseMoney(text: string, currency: string): number | null {
+  // a sign or a code of the currency stands before or after; a letter between figures is a slip, not to be left out
+  if (/\d[^\d.,'\s]+\d/u.test(text)) return null;
   const n = parseNumber(text.replaceAll(/[^\d.,+\-−\s]/g, ""));
   if (n === null) return null;
   const factor = 10 ** currencyDecimals(currency);

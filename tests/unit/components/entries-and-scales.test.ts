@@ -32,6 +32,10 @@ describe("what is typed", () => {
     expect(parseMoney("500", "JPY")).toBe(500);
     expect(parseMoney("1.234", "KWD")).toBe(1234);
     expect(parseMoney("1.234", "USD")).toBeNull();
+    expect(parseMoney("180 USD", "USD")).toBe(18000);
+    // a letter between figures is a slip: it is never left out to make another amount
+    expect(parseMoney("1e9", "USD")).toBeNull();
+    expect(parseMoney("1O0", "USD")).toBeNull();
     expect(moneyEntry(18000, "USD")).toBe("180.00");
     expect(moneyEntry(500, "JPY")).toBe("500");
   });

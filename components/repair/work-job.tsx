@@ -298,7 +298,7 @@ function Part({ part, job, isFixed, busy, run, onUsePart, onRemovePart, onSetPar
         </span>
       )}
       <span className="faint of">
-        of {formatQuantity(part.agreedMilli)} agreed
+        of {formatQuantity(part.agreedMilli)} agreed{" "}
         {!isFixed && used === 0 && part.agreedMilli > 1000 && (
           <button
             type="button"

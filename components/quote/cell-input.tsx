@@ -1,6 +1,6 @@
 "use client";
 
-import { useState } from "react";
+import { useRef, useState } from "react";
 import { cx } from "@/components/ui/cx";
 import { formatPrice, formatQuantity } from "@/components/ui/format";
 import { moneyEntry, parseMoney, parseNumber } from "@/components/ui/parse-entry";
@@ -34,41 +34,61 @@ export function MoneyCell({
   error,
 }: MoneyCellProps) {
   const [draft, setDraft] = useState<string | null>(null);
+  const isLeaving = useRef(false);
+  const [refused, setRefused] = useState<string | null>(null);
   const parsed = draft === null ? value : parseMoney(draft, currency);
   const isBad = draft !== null && draft.trim() !== "" && (parsed === null || parsed < 0);
   return (
-    <input
-      className={cx("num cellin", className)}
-      inputMode="decimal"
-      autoComplete="off"
-      aria-label={label}
-      aria-invalid={isBad || error ? true : undefined}
-      title={error ?? (isBad ? "That is not an amount." : undefined)}
-      readOnly={readOnly}
-      value={draft ?? (value === null ? "" : formatPrice(value, currency, locale))}
-      onFocus={(event) => {
-        if (readOnly) return;
-        setDraft(value === null ? "" : moneyEntry(value, currency));
-        const field = event.currentTarget;
-        requestAnimationFrame(() => field.select());
-      }}
-      onChange={(event) => setDraft(event.target.value)}
-      onBlur={() => {
-        if (draft !== null && !isBad) {
-          if (draft.trim() === "") {
-            if (isOptional && value !== null) onCommit(null);
-          } else if (parsed !== null && parsed !== value) onCommit(parsed);
-        }
-        setDraft(null);
-      }}
-      onKeyDown={(event) => {
-        if (event.key === "Escape") {
+    <>
+      <input
+        className={cx("num cellin", className)}
+        inputMode="decimal"
+        autoComplete="off"
+        aria-label={label}
+        aria-invalid={isBad || error ? true : undefined}
+        title={error ?? (isBad ? "That is not an amount." : undefined)}
+        readOnly={readOnly}
+        value={draft ?? (value === null ? "" : formatPrice(value, currency, locale))}
+        onFocus={(event) => {
+          if (readOnly) return;
+          setRefused(null);
+          setDraft(value === null ? "" : moneyEntry(value, currency));
+          const field = event.currentTarget;
+          requestAnimationFrame(() => field.select());
+        }}
+        onChange={(event) => setDraft(event.target.value)}
+        onBlur={() => {
+          if (isLeaving.current) {
+            isLeaving.current = false;
+            return setDraft(null);
+          }
+          if (draft !== null && isBad) setRefused(`“${draft.trim()}” is not an amount.`);
+          if (draft !== null && !isBad) {
+            if (draft.trim() === "") {
+              if (isOptional && value !== null) onCommit(null);
+            } else if (parsed !== null && parsed !== value) onCommit(parsed);
+          }
           setDraft(null);
-          event.currentTarget.blur();
-        }
-        if (event.key === "Enter") event.currentTarget.blur();
-      }}
-    />
+        }}
+        onKeyDown={(event) => {
+          if (event.key === "Escape") {
+            isLeaving.current = true;
+            event.currentTarget.blur();
+          }
+          if (event.key === "Enter") event.currentTarget.blur();
+        }}
+      />
+      {refused && <Refused why={refused} />}
+    </>
+  );
+}
+
+/** What was typed did not fit: the cell went back to what it held, and says so. */
+function Refused({ why }: { why: string }) {
+  return (
+    <span className="cellwhy" role="alert">
+      {why} Left as it was.
+    </span>
   );
 }
 
@@ -81,38 +101,50 @@ export interface QuantityCellProps extends Common {
 
 export function QuantityCell({ label, milli, isHours, onCommit, readOnly, className, error }: QuantityCellProps) {
   const [draft, setDraft] = useState<string | null>(null);
+  const isLeaving = useRef(false);
+  const [refused, setRefused] = useState<string | null>(null);
   const n = draft === null ? null : parseNumber(draft.replace(/h$/i, ""));
   const next = n === null ? null : Math.round(n * 1000);
   const isBad = draft !== null && (next === null || next < 1 || next > 10_000_000);
   return (
-    <input
-      className={cx("num cellin", className)}
-      inputMode="decimal"
-      autoComplete="off"
-      aria-label={label}
-      aria-invalid={isBad || error ? true : undefined}
-      title={error}
-      readOnly={readOnly}
-      value={draft ?? `${formatQuantity(milli)}${isHours ? " h" : ""}`}
-      onFocus={(event) => {
-        if (readOnly) return;
-        setDraft(formatQuantity(milli));
-        const field = event.currentTarget;
-        requestAnimationFrame(() => field.select());
-      }}
-      onChange={(event) => setDraft(event.target.value)}
-      onBlur={() => {
-        if (next !== null && !isBad && next !== milli) onCommit(next);
-        setDraft(null);
-      }}
-      onKeyDown={(event) => {
-        if (event.key === "Escape") {
+    <>
+      <input
+        className={cx("num cellin", className)}
+        inputMode="decimal"
+        autoComplete="off"
+        aria-label={label}
+        aria-invalid={isBad || error ? true : undefined}
+        title={error}
+        readOnly={readOnly}
+        value={draft ?? `${formatQuantity(milli)}${isHours ? " h" : ""}`}
+        onFocus={(event) => {
+          if (readOnly) return;
+          setRefused(null);
+          setDraft(formatQuantity(milli));
+          const field = event.currentTarget;
+          requestAnimationFrame(() => field.select());
+        }}
+        onChange={(event) => setDraft(event.target.value)}
+        onBlur={() => {
+          if (isLeaving.current) {
+            isLeaving.current = false;
+            return setDraft(null);
+          }
+          if (draft !== null && draft.trim() !== "" && isBad)
+            setRefused(next === null ? `“${draft.trim()}” is not a number.` : "It goes from 0.001 to 10,000.");
+          if (next !== null && !isBad && next !== milli) onCommit(next);
           setDraft(null);
-          event.currentTarget.blur();
-        }
-        if (event.key === "Enter") event.currentTarget.blur();
-      }}
-    />
+        }}
+        onKeyDown={(event) => {
+          if (event.key === "Escape") {
+            isLeaving.current = true;
+            event.currentTarget.blur();
+          }
+          if (event.key === "Enter") event.currentTarget.blur();
+        }}
+      />
+      {refused && <Refused why={refused} />}
+    </>
   );
 }
 
@@ -134,6 +166,7 @@ export function TextCell({
   error,
 }: TextCellProps) {
   const [draft, setDraft] = useState<string | null>(null);
+  const isLeaving = useRef(false);
   return (
     <input
       className={cx("cellin text", className)}
@@ -146,12 +179,16 @@ export function TextCell({
       value={draft ?? value}
       onChange={(event) => setDraft(event.target.value)}
       onBlur={() => {
+        if (isLeaving.current) {
+          isLeaving.current = false;
+          return setDraft(null);
+        }
         if (draft !== null && draft.trim() !== value) onCommit(draft.trim());
         setDraft(null);
       }}
       onKeyDown={(event) => {
         if (event.key === "Escape") {
-          setDraft(null);
+          isLeaving.current = true;
           event.currentTarget.blur();
         }
         if (event.key === "Enter") event.currentTarget.blur();

@@ -1,5 +1,6 @@
 import { expect, test } from "@playwright/test";
-import { act, apiAs, BASE, demo, signInOf } from "./people";
+import pg from "pg";
+import { act, apiAs, BASE, freshQuote, signInOf } from "./people";
 
 const LONG = "x".repeat(20_000);
 /** What people and programs send by mistake or on purpose; each must be refused with a reason, never fail the server. */
@@ -116,21 +117,50 @@ test("pages answer odd addresses kindly", async () => {
   }
 });
 
-test("the customer's form comes back with what was typed when something is missing, without scripts", async ({
+test("the customer's form works without scripts, and comes back with what was typed when something is missing", async ({
   browser,
 }) => {
+  const { path, customer } = await freshQuote();
   const context = await browser.newContext({
     baseURL: BASE,
     javaScriptEnabled: false,
     viewport: { width: 390, height: 844 },
   });
   const page = await context.newPage();
-  await page.goto(new URL(demo().customerLink).pathname);
-  await page.getByLabel("Your full name").fill("Ambrose Fell");
-  // the browser's own check would stop the form; a program or an old browser does not have it
-  await page.locator("form#answers").evaluate((form) => form.setAttribute("novalidate", ""));
-  await page.getByRole("button", { name: /^Agree/ }).click();
+  await page.goto(path);
+  await expect(page.getByRole("heading", { level: 1 })).toHaveText("Air gets in");
+  // an old browser does not check the form before it is sent: post it as it is
+  const answer = await page.request.post(`${path}/answer`, { form: { givenBy: customer }, maxRedirects: 0 });
+  expect(answer.status()).toBe(303);
+  await page.goto(path);
   await expect(page.getByText(/Something is missing below/)).toBeVisible();
-  await expect(page.getByLabel("Your full name")).toHaveValue("Ambrose Fell");
+  await expect(page.getByLabel("Your full name")).toHaveValue(customer);
+  await page.getByText("Yes, do it").click();
+  await page.getByLabel(/I am the owner/).check();
+  await page.getByRole("button", { name: "Send my answers" }).click();
+  await expect(page.getByRole("heading", { level: 1 })).toHaveText("You agreed to one job");
   await context.close();
+});
+
+test("200 answers to one link at once make one approval, and the rest get the same", async () => {
+  const { path, caseId, customer } = await freshQuote();
+  const api = await apiAs(null);
+  const html = await (await api.get(path)).text();
+  const jobId = /name="answer\.(job_[0-9a-z]+)"/.exec(html)?.[1];
+  expect(jobId).toBeTruthy();
+  const form = { [`answer.${jobId}`]: "yes", givenBy: customer, mayDecide: "on" };
+  const answers = await Promise.all(
+    Array.from({ length: 200 }, () =>
+      api.post(`${path}/answer`, { form, maxRedirects: 0, timeout: 90_000 }).then((each) => each.status()),
+    ),
+  );
+  expect(new Set(answers)).toEqual(new Set([303]));
+  const client = new pg.Client({ connectionString: process.env.DATABASE_URL });
+  await client.connect();
+  const { rows } = await client.query(
+    "select (select count(*)::int from approvals where case_id = $1) as approvals, (select count(*)::int from work_jobs where case_id = $1) as jobs",
+    [caseId],
+  );
+  await client.end();
+  expect(rows[0]).toEqual({ approvals: 1, jobs: 1 });
 });

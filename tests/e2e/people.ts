@@ -97,3 +97,43 @@ export async function mailTo(address: string, words: RegExp): Promise<Mail & Rec
     await new Promise((resolve) => setTimeout(resolve, 400));
   }
 }
+
+/** A case whose quote of one job has just been sent; the path of the customer's link, from their mail. */
+export async function freshQuote(): Promise<{ caseId: string; path: string; customer: string }> {
+  const stamp = `${Date.now().toString(36)}${Math.floor(performance.now())}`;
+  const customer = "Ambrose Fell";
+  const email = `quote-${stamp}@post.example`;
+  const writer = await apiAs(signInOf("writer"));
+  const technician = await apiAs(signInOf("technician"));
+  const { id: caseId } = await act<{ id: string }>(writer, "case.open", {
+    customer: { name: customer, email },
+    vehicle: { label: "Corvid Marlin 2.4", engine: {} },
+    words: "Shakes at idle",
+    odometerInKm: 100_000,
+    authorization: { amountMinor: 18_000, givenBy: customer, how: "in-person" },
+  });
+  await act(writer, "case.advance", { caseId, to: "testing" });
+  await act(technician, "cause.mark", {
+    caseId,
+    causeId: "intake-air-leak",
+    mark: "suspected",
+    reason: "Hisses at runner 3",
+  });
+  await act(technician, "case.advance", { caseId, to: "quoting" });
+  await act(writer, "quote.addJob", {
+    caseId,
+    title: "Reseal the intake",
+    lines: [{ id: "l1", kind: "labour", description: "Reseal", quantityMilli: 1000, unitPriceMinor: 14_200 }],
+  });
+  await act(writer, "quote.saveDraft", {
+    caseId,
+    version: 1,
+    headline: "Air gets in",
+    finding: "A seal.",
+    warranty: "",
+  });
+  await act(writer, "quote.send", { caseId });
+  const mail = await mailTo(email, /Estimate/);
+  const link = /https?:\/\/\S+\/q\/[\w-]{43}/.exec(mail.text)?.[0] ?? "";
+  return { caseId, path: new URL(link).pathname, customer };
+}

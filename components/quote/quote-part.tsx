@@ -109,6 +109,8 @@ export function QuotePart(props: QuotePartProps) {
     .flatMap((job) => job.lines)
     .reduce((total, line) => (line.kind === "labour" ? total + line.quantityMilli : total), 0);
   const first = props.customerName.split(" ")[0];
+  const cannotSend =
+    props.cannotSend ?? (jobs.length === 0 ? "Add a job first: there is nothing to ask yet." : undefined);
   const title =
     jobs.length === 0
       ? "No job to ask about yet"
@@ -148,7 +150,9 @@ export function QuotePart(props: QuotePartProps) {
   async function send() {
     setSending(true);
     await editor.flush();
-    await run(props.onSend(props.sendTo));
+    // what is sent is what the server holds: never while the screen shows something else
+    if (editor.isUnsaved()) setFault("Not sent: a change to a job is not saved yet. Put it right, then send.");
+    else await run(props.onSend(props.sendTo));
     setSending(false);
   }
 
@@ -308,15 +312,15 @@ export function QuotePart(props: QuotePartProps) {
                 Once sent, this revision cannot be changed.
               </p>
               <Button
-                disabled={Boolean(props.cannotSend)}
-                aria-describedby={props.cannotSend ? "why-not-sent" : undefined}
+                disabled={Boolean(cannotSend)}
+                aria-describedby={cannotSend ? "why-not-sent" : undefined}
                 busy={isSending}
                 busyLabel="Sending"
                 onClick={() => void send()}
               >
                 Send revision {props.number} to {first}
               </Button>
-              {props.cannotSend && <WhyOff id="why-not-sent">{props.cannotSend}</WhyOff>}
+              {cannotSend && <WhyOff id="why-not-sent">{cannotSend}</WhyOff>}
             </div>
           )}
           {props.aside}
@@ -383,6 +387,8 @@ function useJobs(jobs: readonly QuoteJobView[], save: QuotePartProps["onSaveJob"
   const [conflict, setConflict] = useState<JobConflict | null>(null);
   const versions = useRef<Record<string, number>>({});
   const pending = useRef<Record<string, QuoteJobView>>({});
+  /** Jobs whose last change the server did not take. */
+  const refused = useRef(new Set<string>());
   const timer = useRef<ReturnType<typeof setTimeout>>(undefined);
   const chain = useRef<Promise<void>>(Promise.resolve());
   const saveRef = useRef(save);
@@ -412,10 +418,12 @@ function useJobs(jobs: readonly QuoteJobView[], save: QuotePartProps["onSaveJob"
         try {
           const result = await saveRef.current(id, versions.current[id] ?? job.version, fields);
           if (result.ok) {
+            refused.current.delete(id);
             versions.current[id] = result.data?.version ?? (versions.current[id] ?? job.version) + 1;
             setErrors((was) => ({ ...was, [id]: {} }));
             setState({ kind: "saved" });
           } else {
+            refused.current.add(id);
             if (result.conflict) setConflict({ by: result.conflict.by, mine: job, theirs: result.conflict.job });
             setErrors((was) => ({ ...was, [id]: result.fieldErrors ?? {} }));
             setState({ kind: "failed", reason: result.message });
@@ -448,6 +456,7 @@ function useJobs(jobs: readonly QuoteJobView[], save: QuotePartProps["onSaveJob"
       setConflict(null);
       if (whose === "mine") change({ ...conflict.mine, version: conflict.theirs.version });
       else {
+        refused.current.delete(conflict.theirs.id);
         setEdits((was) => ({ ...was, [conflict.theirs.id]: conflict.theirs }));
         setState({ kind: "saved" });
       }
@@ -466,6 +475,7 @@ function useJobs(jobs: readonly QuoteJobView[], save: QuotePartProps["onSaveJob"
     jobs: merged,
     change,
     flush,
+    isUnsaved: () => jobs.some((job) => refused.current.has(job.id) || pending.current[job.id]),
     state,
     errors,
     conflict,

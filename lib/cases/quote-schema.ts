@@ -8,10 +8,10 @@ export type LineKind = (typeof LINE_KINDS)[number];
 export type Urgency = (typeof URGENCIES)[number];
 
 const money = z
-  .number()
-  .int("Money is counted in whole cents.")
+  .number({ error: "An amount of money is a number." })
+  .max(100_000_000, "That is more than a million; check the amount.")
   .min(0, "A price can't be below zero.")
-  .max(100_000_000, "That is more than a million; check the amount.");
+  .int("Money is counted in whole cents.");
 
 /** One line of a job as it is edited. Quantities are thousandths (hours too), money is minor units. */
 export const quoteLineDraft = z.object({

@@ -22,9 +22,9 @@ export const idText = z
 export const reasonText = needed("The reason", 500);
 export const moneyMinor = z
   .number({ error: "An amount of money is a number." })
-  .int("Money is counted in whole cents.")
+  .max(100_000_000, "That is more than a million; check the amount.")
   .min(0, "An amount can't be below zero.")
-  .max(100_000_000, "That is more than a million; check the amount.");
+  .int("Money is counted in whole cents.");
 const EARLIEST = Date.UTC(1990, 0, 1);
 const LATEST = Date.UTC(2100, 0, 1);
 export const instantText = z.iso

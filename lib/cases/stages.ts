@@ -124,7 +124,8 @@ export function demandsFor(next: PathStage, facts: CaseFacts): Demand[] {
           who: "technician",
         },
         {
-          met: untimed.length === 0,
+          // a job that is still open has neither its time nor its parts yet
+          met: open.length === 0 && untimed.length === 0,
           text: untimed.length === 0 ? "Time recorded" : `Time on: ${untimed.map((job) => job.title).join(", ")}`,
           who: "technician",
         },

@@ -24,6 +24,12 @@ function usableTotals(r: Readings): Total[] {
       const long = longs.find((x) => x.sample === sample);
       const some = short ?? long;
       if (!some) continue;
+      // half a total is no total: the other half was typed but can't be, and its own note says so
+      const values = r.caseFile.samples?.[sample]?.values ?? {};
+      const typed = (id: "SHRTFT1" | "LONGFT1" | "SHRTFT2" | "LONGFT2") => typeof values[id] === "number";
+      const isHalved =
+        (!short && typed(bank === 1 ? "SHRTFT1" : "SHRTFT2")) || (!long && typed(bank === 1 ? "LONGFT1" : "LONGFT2"));
+      if (isHalved) continue;
       const point = OPERATING_POINTS.indexOf(some.mode as (typeof OPERATING_POINTS)[number]);
       if (point < 0) {
         r.note(

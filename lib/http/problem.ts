@@ -71,11 +71,8 @@ export function toAppError(error: unknown): AppError {
   if (error instanceof ZodError) {
     const fields = error.issues.map((issue) => ({ pointer: pointerOf(issue.path), detail: issue.message }));
     const first = fields[0];
-    return new AppError(
-      "invalid",
-      first ? `${first.pointer.slice(1) || "The request"}: ${first.detail}` : "The request does not fit.",
-      { fields, cause: error },
-    );
+    // the sentence is for people; programs find the place in `errors`
+    return new AppError("invalid", first?.detail ?? "The request does not fit.", { fields, cause: error });
   }
   return (
     fromDatabase(error) ??

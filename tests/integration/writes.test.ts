@@ -6,6 +6,7 @@ import { openCase } from "@/lib/services/cases/open";
 import { readCase } from "@/lib/services/cases/read";
 import { recordApproval } from "@/lib/services/quotes/approve";
 import { saveQuoteJob } from "@/lib/services/quotes/draft";
+import { sendQuote } from "@/lib/services/quotes/send";
 import { addSample, setReadings } from "@/lib/services/readings/samples";
 import { clockOn } from "@/lib/services/work/clock";
 import { asDatabaseOwner, caseAsked, caseInTesting, INTAKE, LINES, makeTestShop } from "../helpers/shop";
@@ -136,6 +137,23 @@ describe("writes", () => {
     );
     expect(new Set(given.map((each) => each.approvalId)).size).toBe(1);
     expect(given.filter((each) => !each.repeated).length).toBe(1);
+  });
+
+  it("do not send a second revision that says what the first one says", async () => {
+    const shop = await makeTestShop();
+    const asked = await caseAsked(shop);
+    await expect(shop.do(sendQuote, "writer", { caseId: asked.caseId })).rejects.toMatchObject({
+      code: "precondition",
+    });
+    await shop.do(saveQuoteJob, "writer", {
+      caseId: asked.caseId,
+      jobId: asked.jobIds[0],
+      version: 1,
+      title: "Reseal the intake manifold, both sides",
+      lines: LINES,
+    });
+    const second = await shop.do(sendQuote, "writer", { caseId: asked.caseId });
+    expect(second.number).toBe(2);
   });
 
   it("allow nothing beyond what was approved", async () => {

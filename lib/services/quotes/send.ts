@@ -14,7 +14,7 @@ import { queueMail } from "../mail/queue";
 import { quotePaperModel } from "../papers/models";
 import { defineVerb } from "../verb";
 import { makeLink } from "./links";
-import { snapshotOf } from "./snapshot";
+import { isUnchanged, snapshotOf } from "./snapshot";
 
 const SENDABLE = ["quoting", "waiting", "repair"];
 
@@ -43,6 +43,11 @@ export const sendQuote = defineVerb({
     if (empty) throw invalidField("/jobs", `“${empty.title}” has no lines yet.`);
     if (!snapshot.headline || !snapshot.finding)
       throw invalidField("/finding", "Say in plain words what is wrong before sending.");
+    if (isUnchanged(parts, snapshot, ctx.now))
+      throw new AppError(
+        "precondition",
+        `Revision ${number - 1} says exactly this already and waits for an answer. Change something first, or withdraw it.`,
+      );
     const address = to ?? customer.email;
     const id = newId("rev", ctx.now.getTime());
     const sha256 = digestOf(snapshot);

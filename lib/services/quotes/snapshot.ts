@@ -3,7 +3,7 @@ import type { CaseParts } from "@/db/queries/cases";
 import { customerReadings } from "@/lib/cases/customer-readings";
 import type { RevisionJob, RevisionSnapshot, Urgency } from "@/lib/cases/quote-schema";
 import { priceJob } from "@/lib/quote/job";
-import { caseFileOf, settingsOf } from "../cases/facts";
+import { caseFileOf, settingsOf, standingRevisionOf } from "../cases/facts";
 import { priceDiagnosis, taxOf } from "./price";
 
 export interface SnapshotOptions {
@@ -133,4 +133,17 @@ export function snapshotOf(parts: CaseParts, { number, now, expiresAt }: Snapsho
     keepParts: row.keepParts,
     validUntil: expiresAt.toISOString(),
   };
+}
+
+/**
+ * Whether a new revision would ask exactly what the standing one asks already. Asking twice only confuses: the first
+ * link would stop, and the customer would see nothing new.
+ */
+export function isUnchanged(parts: CaseParts, snapshot: RevisionSnapshot, now: Date): boolean {
+  const standing = standingRevisionOf(parts);
+  if (!standing || standing.expiresAt < now) return false;
+  if (parts.approvals.some((approval) => approval.revisionId === standing.id)) return false;
+  const asked = ({ headline, finding, warranty, photoIds, jobs }: RevisionSnapshot) =>
+    JSON.stringify({ headline, finding, warranty, photoIds, jobs });
+  return asked(standing.snapshot) === asked(snapshot);
 }

@@ -5,7 +5,7 @@ import { isOver, type Stage } from "@/lib/cases/stages";
 import { netWithin } from "@/lib/quote/job";
 import { readPriceList } from "@/lib/services/cases/read";
 import { taxOf } from "@/lib/services/quotes/price";
-import { snapshotOf } from "@/lib/services/quotes/snapshot";
+import { isUnchanged, snapshotOf } from "@/lib/services/quotes/snapshot";
 import { QuoteClient } from "../_client/quote-client";
 import { CaseShell } from "../_views/case-shell";
 import { loadCase, type PartParams } from "../_views/load";
@@ -36,8 +36,11 @@ export default async function QuotePage({ params }: PartParams) {
   const money = (minor: number) => formatPrice(minor, settings.currency, settings.locale);
   const { price, ceilingMinor } = view.diagnosis;
   const isAnswered = standing !== null && approvals.some((each) => each.revisionId === standing.id);
+  const snapshot = snapshotOf(view.parts, { number, now: ctx.now, expiresAt });
   const cannotSend = SENDABLE.includes(stage)
-    ? undefined
+    ? isUnchanged(view.parts, snapshot, ctx.now)
+      ? `Revision ${number - 1} says exactly this and waits for an answer.`
+      : undefined
     : isOver(stage)
       ? "The case has ended."
       : stage === "parked"
@@ -51,7 +54,7 @@ export default async function QuotePage({ params }: PartParams) {
         customerName={customer.name}
         jobs={quoteJobViews(view)}
         draft={draftView(view)}
-        snapshot={snapshotOf(view.parts, { number, now: ctx.now, expiresAt })}
+        snapshot={snapshot}
         photos={photoViews(view)}
         money={{
           currency: settings.currency,

@@ -130,7 +130,7 @@ export function demandsFor(next: PathStage, facts: CaseFacts): Demand[] {
           who: "technician",
         },
         {
-          met: parts.length === 0,
+          met: open.length === 0 && parts.length === 0,
           text:
             parts.length === 0 ? "Parts recorded" : `Parts recorded for: ${parts.map((job) => job.title).join(", ")}`,
           who: "technician",

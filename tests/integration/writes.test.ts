@@ -1,6 +1,8 @@
+import { createHash } from "node:crypto";
 import { sql } from "drizzle-orm";
 import { describe, expect, it } from "vitest";
 import { inShop } from "@/db/client";
+import { canonicalJson } from "@/lib/canonical";
 import { addNote } from "@/lib/services/cases/intake";
 import { openCase } from "@/lib/services/cases/open";
 import { readCase } from "@/lib/services/cases/read";
@@ -154,6 +156,18 @@ describe("writes", () => {
     });
     const second = await shop.do(sendQuote, "writer", { caseId: asked.caseId });
     expect(second.number).toBe(2);
+  });
+
+  it("keep a paper's sum true to its stored data", async () => {
+    const shop = await makeTestShop();
+    const { caseId } = await caseAsked(shop);
+    const { rows } = await asDatabaseOwner((client) =>
+      client.query<{ snapshot: unknown; sha256: string }>("select snapshot, sha256 from papers where case_id = $1", [
+        caseId,
+      ]),
+    );
+    expect(rows).toHaveLength(1);
+    expect(createHash("sha256").update(canonicalJson(rows[0]?.snapshot)).digest("hex")).toBe(rows[0]?.sha256);
   });
 
   it("allow nothing beyond what was approved", async () => {

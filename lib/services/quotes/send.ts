@@ -2,6 +2,7 @@ import "server-only";
 import { createHash } from "node:crypto";
 import { and, eq, isNull, ne } from "drizzle-orm";
 import { customerLinks, papers, quoteRevisions } from "@/db/schema";
+import { canonicalJson } from "@/lib/canonical";
 import { sendQuoteInput, withdrawQuoteInput } from "@/lib/cases/quote-schema";
 import { env } from "@/lib/env";
 import { AppError, invalidField, notFound } from "@/lib/errors";
@@ -19,7 +20,7 @@ import { isUnchanged, snapshotOf } from "./snapshot";
 const SENDABLE = ["quoting", "waiting", "repair"];
 
 /** The SHA-256 of a snapshot in one canonical form: the same data gives the same sum. */
-export const digestOf = (snapshot: unknown) => createHash("sha256").update(JSON.stringify(snapshot)).digest("hex");
+export const digestOf = (snapshot: unknown) => createHash("sha256").update(canonicalJson(snapshot)).digest("hex");
 
 export const sendQuote = defineVerb({
   name: "quote.send",

@@ -1,5 +1,6 @@
 import "server-only";
 import type { CaseParts } from "@/db/queries/cases";
+import { canonicalJson } from "@/lib/canonical";
 import { customerReadings } from "@/lib/cases/customer-readings";
 import type { RevisionJob, RevisionSnapshot, Urgency } from "@/lib/cases/quote-schema";
 import { priceJob } from "@/lib/quote/job";
@@ -144,6 +145,6 @@ export function isUnchanged(parts: CaseParts, snapshot: RevisionSnapshot, now: D
   if (!standing || standing.expiresAt < now) return false;
   if (parts.approvals.some((approval) => approval.revisionId === standing.id)) return false;
   const asked = ({ headline, finding, warranty, photoIds, jobs }: RevisionSnapshot) =>
-    JSON.stringify({ headline, finding, warranty, photoIds, jobs });
+    canonicalJson({ headline, finding, warranty, photoIds, jobs });
   return asked(standing.snapshot) === asked(snapshot);
 }

@@ -13,11 +13,11 @@ import { pageCtx } from "@/lib/auth/session";
 import { type AuditQuery, readAudit, readAuditContext } from "@/lib/services/audit/read";
 import { readShop } from "@/lib/services/shops/read";
 import { address, one, type Search, typed, wholeNumber } from "../_views/address";
+import { entryView } from "../_views/audit/entries";
+import { SUBJECTS } from "../_views/audit/words";
 import { OwnersOnly } from "../_views/owners-only";
 import { StaffTop } from "../_views/staff-top";
 import { chainDays, dayBounds, dayOf } from "./_views/days";
-import { entryView } from "./_views/entries";
-import { SUBJECTS } from "./_views/words";
 import "../records.css";
 
 export const metadata: Metadata = { title: "Audit" };

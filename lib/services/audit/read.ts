@@ -65,7 +65,7 @@ export type AuditRow = typeof audit.$inferSelect;
 
 /** What entries need to be read: the numbers of their cases, the names of people, and the entries on both sides of each. */
 export async function readAuditContext(ctx: Ctx, rows: readonly AuditRow[]) {
-  return readIn(ctx, "audit.read", async (tx) => {
+  return readIn(ctx, "case.read", async (tx) => {
     const staff = await tx
       .select({ id: people.id, name: people.name, role: people.role, isActive: people.isActive })
       .from(people)

@@ -70,18 +70,32 @@ export async function readPriceList(ctx: Ctx) {
 
 export type PriceList = Awaited<ReturnType<typeof readPriceList>>;
 
-/** Every event of a case in order, newest first. */
+const COSTS = new Set(["costMinor", "cost_minor"]);
+
+/** The same value with every cost taken out, at any depth. */
+function bare(value: unknown): unknown {
+  if (Array.isArray(value)) return value.map(bare);
+  if (typeof value !== "object" || value === null) return value;
+  return Object.fromEntries(
+    Object.entries(value).flatMap(([key, part]) => (COSTS.has(key) ? [] : [[key, bare(part)]])),
+  );
+}
+
+/** Every event of a case in order, newest first; what a thing cost the shop only for those who may see it. */
 export async function readCaseHistory(ctx: Ctx, caseId: string, beforeSeq?: number) {
-  return readIn(ctx, "case.read", (tx) =>
-    tx
+  return readIn(ctx, "case.read", async (tx) => {
+    const rows = await tx
       .select()
       .from(audit)
       .where(
         and(eq(audit.shopId, ctx.shopId), eq(audit.caseId, caseId), ...(beforeSeq ? [lt(audit.seq, beforeSeq)] : [])),
       )
       .orderBy(desc(audit.seq))
-      .limit(101),
-  );
+      .limit(101);
+    if (mayDo(ctx.actor.role, "cost.see")) return rows;
+    type Stored = (typeof rows)[number]["before"];
+    return rows.map((row) => ({ ...row, before: bare(row.before) as Stored, after: bare(row.after) as Stored }));
+  });
 }
 
 export async function readPaper(ctx: Ctx, paperId: string) {

@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
+import { type EntryContext, entryView, fieldViews } from "@/app/(staff)/_views/audit/entries";
 import { chainDays, dayBounds } from "@/app/(staff)/audit/_views/days";
-import { type EntryContext, entryView, fieldViews } from "@/app/(staff)/audit/_views/entries";
 import type { AuditRow } from "@/lib/services/audit/read";
 
 const CONTEXT: EntryContext = {

@@ -5,10 +5,11 @@ import { capitalise, countWord, formatPrice, formatWhen } from "@/components/ui/
 import { moneyEntry } from "@/components/ui/parse-entry";
 import { mayDo } from "@/lib/auth/permissions";
 import { PAYMENT_LABELS, PAYMENT_WAYS } from "@/lib/cases/work-schema";
+import { readAuditContext } from "@/lib/services/audit/read";
 import { readCaseHistory } from "@/lib/services/cases/read";
 import type { CaseView } from "@/lib/services/cases/view";
 import { ActDialog } from "../../../_client/act-dialog";
-import { auditEntryViews } from "../../../_views/audit-entries";
+import { entryView } from "../../../_views/audit/entries";
 import { CaseShell } from "../_views/case-shell";
 import { loadCase, type PartParams } from "../_views/load";
 
@@ -70,12 +71,15 @@ export default async function PapersPage({
       : `, ${formatPrice(owed, invoice.currency, view.settings.locale)} is owed`
     : "";
   const last = rows[PAGE - 1];
+  const shown = rows.slice(0, PAGE);
+  const { currency, locale, timeZone } = view.settings;
+  const context = { ...(await readAuditContext(ctx, shown)), currency, locale, timeZone, isOneDay: false };
   return (
     <CaseShell ctx={ctx} view={view} part="papers">
       <PapersPart
         title={`${count}${standing}`}
         papers={paperViews(view)}
-        history={auditEntryViews(rows.slice(0, PAGE), { timeZone: view.settings.timeZone, withDay: true })}
+        history={shown.map((entry) => entryView(entry, context))}
         locale={view.settings.locale}
         acts={
           invoice && owed > 0 && mayDo(ctx.actor.role, "payment.record") ? (

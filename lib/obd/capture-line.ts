@@ -26,15 +26,18 @@ const LONGEST_LINE = 16384;
 const isAnswer = (b: number | undefined) => b !== undefined && ((b >= 0x41 && b <= 0x4a) || b === 0x7f);
 const isRequest = (b: number | undefined) => b !== undefined && b >= 0x01 && b <= 0x0a;
 
-/** Reads one line, without its line end; never throws. */
-export function parseCaptureLine(text: string): CaptureLine {
+/**
+ * Reads one line, without its line end; never throws.
+ * @param midMessage whether frames without an id are in the middle of a message, so that 21 begins a frame, not a time
+ */
+export function parseCaptureLine(text: string, midMessage = false): CaptureLine {
   if (text.length > LONGEST_LINE) return problem("line is longer than any answer");
   const line = text.replace(/^\uFEFF/, "").trim();
   if (line === "") return { kind: "skipped", reason: "blank" };
   if (/^(#|\/\/|%)/.test(line)) return { kind: "skipped", reason: "comment" };
   const spaced = /[\s;]/.test(line) ? line.split(/[\s;]+/) : line.split(",");
   const tokens = spaced.map((t) => t.replace(/^>/, "").replace(/,$/, "")).filter((t) => t !== "");
-  const { time, used } = takeTime(tokens);
+  const { time, used } = takeTime(tokens, midMessage);
   return readFrame(tokens.slice(used), time);
 }
 
@@ -88,7 +91,8 @@ function withoutId(data: number[], time: CaptureTime | null): CaptureLine {
   if (isAnswer(first)) return { kind: "answer", time, source: null, bytes: data };
   const fits = first === data.length - 1 || data.length === 8;
   if (first >= 3 && first <= 7 && isAnswer(second) && fits) return { kind: "frame", time, source: null, data };
-  if (first === 2 && second === 0x43 && data.length !== 3) return { kind: "frame", time, source: null, data };
+  // "02 43 00" alone is a freeze frame request; padded to a whole frame it is an empty list of codes.
+  if (first === 2 && isAnswer(second) && data.length === 8) return { kind: "frame", time, source: null, data };
   const isFirst = first >> 4 === 1 && data.length === 8 && isAnswer(third);
   if (isFirst || first >> 4 === 2) return { kind: "frame", time, source: null, data };
   if (isRequest(first)) return { kind: "skipped", reason: "request" };
@@ -129,7 +133,7 @@ function takeId(tokens: string[]): Head {
 const CLOCK = /^(\d{1,2}):(\d{2}):(\d{2}(?:[.,]\d+)?)$/;
 const DATE = /^(\d{4})-(\d{2})-(\d{2})(?:[T_](\d{2}:\d{2}:\d{2}(?:[.,]\d+)?)(Z|[+-]\d{2}:?\d{2})?)?$/i;
 
-function takeTime(tokens: string[]): { time: CaptureTime | null; used: number } {
+function takeTime(tokens: string[], midMessage: boolean): { time: CaptureTime | null; used: number } {
   const nothing = { time: null, used: 0 };
   const first = (tokens[0] ?? "").replace(/^[([](.*?)[)\]]?:?$/, "$1");
   const at = (form: CaptureTime["form"], seconds: number | null, used = 1) => ({
@@ -152,7 +156,7 @@ function takeTime(tokens: string[]): { time: CaptureTime | null; used: number } 
   if (number[3]) return at("seconds", number[3].toLowerCase() === "ms" ? value / 1000 : value);
   if (number[2] !== undefined || first !== tokens[0])
     return value < 1e9 ? at("seconds", value) : at("epoch", epoch(value));
-  if (!startsAnswer(tokens.slice(1)) || isOwnLength(first, tokens.slice(1))) return nothing;
+  if (!canBeCount(first, tokens.slice(1), midMessage)) return nothing;
   if (value >= 1e9) return at("epoch", epoch(value));
   return { time: { form: "count", seconds: null, count: value }, used: 1 };
 }
@@ -175,16 +179,18 @@ function zoneSeconds(zone: string): number {
   return m ? (m[1] === "-" ? -1 : 1) * (Number(m[2]) * 3600 + Number(m[3]) * 60) : 0;
 }
 
-/** Whether what follows a whole number is an id or an answer, so that the number can only be a time. */
-function startsAnswer(rest: string[]): boolean {
+/**
+ * Whether a whole number before `rest` can only be a time. Before an id it is one; before an answer without an id it
+ * could also be the answer's own first byte, its length, or a consecutive frame's number.
+ */
+function canBeCount(first: string, rest: string[], midMessage: boolean): boolean {
   const { id, rest: left } = takeId(rest);
   if (id !== null) return true;
-  return isAnswer(Number.parseInt((left[0] ?? "").slice(0, 2), 16)) && /^([0-9a-f]{2})+$/i.test(left[0] ?? "");
-}
-
-/** A small number before an answer without an id is its length when it counts the bytes that follow. */
-function isOwnLength(first: string, rest: string[]): boolean {
-  if (takeId(rest).id !== null || !/^0?[1-7]$/.test(first)) return false;
-  const bytes = rest.join("").length / 2;
-  return Number(first) === bytes || first.length === 2;
+  if (!left.every((t) => /^([0-9a-f]{2})+$/i.test(t))) return false;
+  if (!isAnswer(Number.parseInt((left[0] ?? "").slice(0, 2), 16))) return false;
+  const bytes = left.join("").length / 2;
+  if (first.length === 1) return Number(first) !== bytes;
+  if (first.length > 2) return true;
+  if (first.startsWith("0") || isAnswer(Number.parseInt(first, 16))) return false;
+  return !(first.startsWith("2") && (midMessage || bytes === 7));
 }

@@ -66,7 +66,7 @@ export function createCaptureReader(start: DecodeContext = NEW_CONTEXT): Capture
   return {
     push(text) {
       line += 1;
-      const read = parseCaptureLine(text);
+      const read = parseCaptureLine(text, frames.isOpen(""));
       if (read.kind === "problem") return [{ kind: "problem", line, source: null, reason: read.reason }];
       if (read.kind === "skipped")
         return read.reason === "blank" ? [] : [{ kind: "skipped", line, reason: read.reason }];

@@ -188,7 +188,7 @@ describe("a capture", () => {
     expect(captureShare(["time,rpm,speed", "0.0,750,0", "0.1,755,0", "12;36C;24,77g/s"])).toBe(0);
     expect(captureShare([])).toBe(0);
   });
-  it("never throws on any text, and says something about every line that holds any", () => {
+  it("never throws on any text", () => {
     const token = fc.oneof(
       fc.constantFrom(
         "7E8",
@@ -216,7 +216,7 @@ describe("a capture", () => {
     );
     fc.assert(
       fc.property(fc.array(line, { maxLength: 30 }), (lines) => {
-        for (const event of readCapture(lines)) expect(event.line).toBeGreaterThanOrEqual(0);
+        for (const event of readCapture(lines)) expect(event.line).toBeLessThanOrEqual(lines.length);
         captureShare(lines);
       }),
       { numRuns: 1000 },

@@ -41,6 +41,14 @@ export function acceptVin(vin: string | undefined): string | null {
   return result.normalized;
 }
 
+/** The model year a VIN names, where it names one: it tells the assessment what the vehicle can't have. */
+export function modelYearOf(vin: string | undefined, stated: number | undefined): number | null {
+  if (stated) return stated;
+  if (!vin) return null;
+  const { state, binding, modelYears } = checkVin(vin, { lightVehicle: true });
+  return state === "valid" && binding && modelYears.length === 1 ? (modelYears[0] ?? null) : null;
+}
+
 export async function requireTechnician(tx: Tx, ctx: Ctx, technicianId: string): Promise<void> {
   const [person] = await tx
     .select({ role: people.role, isActive: people.isActive })
@@ -197,7 +205,7 @@ async function resolveVehicle(
     label: input.label,
     plate: normalPlate(input.plate),
     vin: acceptVin(input.vin),
-    modelYear: input.modelYear ?? null,
+    modelYear: modelYearOf(input.vin, input.modelYear),
     engine: input.engine,
     note: input.note ?? null,
     createdAt: ctx.now,

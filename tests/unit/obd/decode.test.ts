@@ -229,6 +229,20 @@ describe("codes whose count does not fit", () => {
   });
 });
 
+describe("test results (service 06, from memory of J1979)", () => {
+  it("fails a value beyond either limit, and leaves out what it cannot scale or find whole", () => {
+    const tests = (text: string) => {
+      const { answer, problems } = decodeAnswer(hex(text));
+      return { pass: answer.kind === "tests" ? answer.tests.map((t) => t.pass) : null, problems: problems.length };
+    };
+    expect(tests("46 21 80 20 00 C1 00 00 00 C0")).toEqual({ pass: [false], problems: 0 });
+    expect(tests("46 21 80 20 00 0F 00 10 00 C0")).toEqual({ pass: [false], problems: 0 });
+    expect(tests("46 21 80 99 00 5A 00 00 00 C0")).toEqual({ pass: [], problems: 1 });
+    expect(tests("46 21 80 20 00 5A")).toEqual({ pass: [], problems: 1 });
+    expect(decodeAnswer(hex("46 A3 0B 24 00 03 00 00 FF FF")).answer).toMatchObject({ tests: [{ cylinder: 2 }] });
+  });
+});
+
 describe("monitors", () => {
   it("reads the compression-ignition form (J1979, from memory) and this driving cycle's", () => {
     const { status, oddities } = decodeMonitors(hex("00 0F EB 80"), "since-clear");

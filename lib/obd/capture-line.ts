@@ -36,10 +36,14 @@ export function parseCaptureLine(text: string, midMessage = false): CaptureLine 
   if (line === "") return { kind: "skipped", reason: "blank" };
   if (/^(#|\/\/|%)/.test(line)) return { kind: "skipped", reason: "comment" };
   const spaced = /[\s;]/.test(line) ? line.split(/[\s;]+/) : line.split(",");
-  const tokens = spaced.map((t) => t.replace(/^>/, "").replace(/,$/, "")).filter((t) => t !== "");
+  const plain = !/[>,]/.test(line) && !spaced.includes("");
+  const tokens = plain ? spaced : spaced.map((t) => t.replace(/^>|,$/g, "")).filter((t) => t !== "");
   const { time, used } = takeTime(tokens, midMessage);
   return readFrame(tokens.slice(used), time);
 }
+
+/** Two upper-case digits, the common form, looked up: most of the reading of a long capture is this. */
+const BYTES = new Map(Array.from({ length: 256 }, (_, n) => [n.toString(16).toUpperCase().padStart(2, "0"), n]));
 
 function problem(reason: string): CaptureLine {
   return { kind: "problem", reason };
@@ -58,6 +62,11 @@ function readFrame(given: string[], time: CaptureTime | null): CaptureLine {
   if (head.id === null && rest.length > 1 && /^[0-9]$/.test(rest[0] ?? "")) length = rest.shift() ?? null;
   const data: number[] = [];
   for (const token of rest) {
+    const byte = BYTES.get(token);
+    if (byte !== undefined) {
+      data.push(byte);
+      continue;
+    }
     const digits = token.replace(/^0x/i, "");
     if (!/^([0-9a-f]{2})+$/i.test(digits)) return problem(`"${token.slice(0, 24)}" is no hex byte`);
     for (let i = 0; i < digits.length; i += 2) data.push(Number.parseInt(digits.slice(i, i + 2), 16));
@@ -140,9 +149,9 @@ function takeTime(tokens: string[], midMessage: boolean): { time: CaptureTime | 
     time: { form, seconds, count: null },
     used,
   });
-  const clock = clockSeconds(first);
+  const clock = first.includes(":") ? clockSeconds(first) : null;
   if (clock !== null) return at("clock", clock);
-  const date = DATE.exec(first);
+  const date = first.includes("-") ? DATE.exec(first) : null;
   if (date) {
     const day = Date.UTC(Number(date[1]), Number(date[2]) - 1, Number(date[3])) / 1000;
     const inDay = clockSeconds(date[4] ?? tokens[1] ?? "");

@@ -8,16 +8,21 @@ const unless =
   (test: Need): Need =>
   (v) =>
     !test(v);
+/** Whether the model year leaves room for a part nobody has stated; an unknown year leaves room for everything. */
+const before = (v: CaseVehicle, year: number) => v.modelYear === undefined || v.modelYear < year;
 const carburetted: Need = (v) => v.fuelSystem === "carburetted";
 const injected = unless(carburetted);
-const needsCarburettor: Need = (v) => v.fuelSystem === undefined || v.fuelSystem === "carburetted";
+// on-board diagnostics, required of cars sold in the US from model year 1996 (40 CFR 86.094-17), ended the carburettor
+const needsCarburettor: Need = (v) => v.fuelSystem === "carburetted" || (v.fuelSystem === undefined && before(v, 1996));
 const closedLoop: Need = (v) => !carburetted(v) && v.o2Sensing !== "none";
 const hasMeter: Need = (v) => v.airMetering === undefined || v.airMetering === "maf" || v.airMetering === "maf+map";
 const hasMapSensor: Need = (v) => v.airMetering === undefined || v.airMetering === "map" || v.airMetering === "maf+map";
 const boosted: Need = (v) => v.aspiration === undefined || v.aspiration === "boosted";
 const direct: Need = (v) => v.fuelSystem === undefined || v.fuelSystem === "direct" || v.fuelSystem === "port+direct";
-const distributor: Need = (v) => v.ignition === undefined || v.ignition === "distributor" || v.ignition === "points";
-const points: Need = (v) => v.ignition === undefined || v.ignition === "points";
+// common practice: distributors were gone by the middle of the 2000s, points a generation earlier
+const distributor: Need = (v) =>
+  v.ignition === "distributor" || v.ignition === "points" || (v.ignition === undefined && before(v, 2008));
+const points: Need = (v) => v.ignition === "points" || (v.ignition === undefined && before(v, 1990));
 const adjustableTiming: Need = (v) => distributor(v);
 const electronicEngine: Need = (v) => injected(v) || (v.o2Sensing !== undefined && v.o2Sensing !== "none");
 const year = (v: CaseVehicle) => v.modelYear ?? 2005;
